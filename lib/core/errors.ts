@@ -1,0 +1,106 @@
+/**
+ * What can go wrong, as one closed list of codes. Commands throw {@link AppError}; throwing rolls back.
+ * Only lib/http turns a code into a status and a problem document; only messages.ts turns it into words.
+ */
+
+export const ERROR_STATUS = {
+  "signed-out": 401,
+  "session-ended": 401,
+  "wrong-sign-in": 401,
+  "sign-in-slowed": 429,
+  forbidden: 403,
+  "cross-origin": 403,
+  "not-found": 404,
+  "method-not-allowed": 405,
+  "unknown-code": 404,
+  "too-large": 413,
+  "not-json": 415,
+  "malformed-json": 400,
+  invalid: 422,
+  "request-id-reused": 409,
+  "bag-already-weighed": 409,
+  "other-helper": 409,
+  "not-a-bag": 422,
+  "bag-already-sorted": 409,
+  "bag-not-weighed": 409,
+  "label-in-use": 409,
+  "bag-wrong-state": 409,
+  "point-built-in": 409,
+  "scale-step": 422,
+  "scale-interval": 422,
+  "scale-max": 422,
+  "scale-intervals": 422,
+  "colour-order": 409,
+  "tare-above-gross": 422,
+  "above-max": 422,
+  "not-a-step": 422,
+  "net-zero": 422,
+  "future-time": 422,
+  "too-long-ago": 422,
+  "one-kind-needs-material": 422,
+  "unknown-point": 422,
+  "unknown-scale": 422,
+  "unknown-container": 422,
+  "unknown-colour": 422,
+  "unknown-reason": 422,
+  "undo-too-late": 409,
+  "undo-not-yours": 403,
+  "undo-used-since": 409,
+  "undone-already": 409,
+  "piles-empty": 422,
+  "sum-beyond-tolerance": 422,
+  "sum-far-above-net": 422,
+  "name-in-use": 409,
+  "email-in-use": 409,
+  "joined-already": 409,
+  "link-expired": 410,
+  "password-too-short": 422,
+  "password-too-long": 422,
+  "password-too-common": 422,
+  "password-wrong": 422,
+  "last-coordinator": 409,
+  "own-role": 409,
+  "ledger-short": 409,
+  "ledger-unbalanced": 500,
+  "ledger-correction-of-reversal": 409,
+  "opening-refused": 409,
+  "zone-fixed": 409,
+  "period-invalid": 422,
+  busy: 503,
+  "database-unavailable": 503,
+  internal: 500,
+} as const satisfies Record<string, number>;
+
+export type ErrorCode = keyof typeof ERROR_STATUS;
+export type ErrorDetail = Readonly<Record<string, string | number | null>>;
+
+/** A refusal with a code, the values its sentence needs, and, for a form, the field it belongs to. */
+export class AppError extends Error {
+  readonly code: ErrorCode;
+  readonly detail: ErrorDetail;
+  /** Path of the input that is wrong, as in a zod issue: ["readings", 0, "gross"]. */
+  readonly path: readonly (string | number)[];
+
+  constructor(code: ErrorCode, detail: ErrorDetail = {}, path: readonly (string | number)[] = []) {
+    super(code);
+    this.name = "AppError";
+    this.code = code;
+    this.detail = detail;
+    this.path = path;
+  }
+}
+
+/** One refused field of a problem document's `errors` list. */
+export type FieldProblem = { path: readonly (string | number)[]; code: string; detail: string };
+
+/** The body of every refusal: RFC 9457 with our extensions `code`, `requestId`, `detailValues`, `errors`. */
+export type ProblemDocument = {
+  type: string;
+  title: string;
+  status: number;
+  detail: string;
+  code: ErrorCode;
+  requestId: string;
+  values: ErrorDetail;
+  errors?: readonly FieldProblem[];
+};

@@ -1,0 +1,179 @@
+/**
+ * The catalogue of sentences (English). An error says what is wrong, what was kept and what to do.
+ * It does not compile when a code has no sentence.
+ */
+import type { ErrorCode, ErrorDetail } from "./errors";
+import type { MassReadingProblem } from "./mass";
+
+type Sentence = (values: ErrorDetail) => string;
+
+const text = (value: string | number | null | undefined): string => String(value ?? "");
+
+const SENTENCES: Record<ErrorCode, Sentence> = {
+  "signed-out": () => "You are not signed in. What you typed is kept; sign in and send it again.",
+  "session-ended": () =>
+    "Your session has ended. What you typed is still here; sign in and save it again.",
+  "wrong-sign-in": () => "That address and password do not fit together. Check both and try again.",
+  "sign-in-slowed": (v) =>
+    `Too many tries. Wait ${text(v.seconds)} seconds and try again; nothing else is needed.`,
+  forbidden: () => "Your role does not include this. Nothing was changed; ask a coordinator.",
+  "cross-origin": () =>
+    "This request came from another site and was refused. Nothing was changed; use the program's own page.",
+  "not-found": () => "There is nothing here under this address, or it is not yours to see.",
+  "method-not-allowed": () => "This address does not take that kind of request.",
+  "unknown-code": (v) =>
+    `No tag of this scheme has the code ${text(v.code)}. Nothing was saved; check it against the label, or give the bag a spare tag.`,
+  "too-large": () => "That is more than this page takes in one go. Nothing was saved.",
+  "not-json": () => "The request was not in the form that this address reads. Nothing was saved.",
+  "malformed-json": () =>
+    "The request could not be read to its end. Nothing was saved; send it again.",
+  invalid: () => "Some of this cannot be right. Nothing was saved; look at the marked fields.",
+  "request-id-reused": () =>
+    "This was sent before with other content. The first one was kept; reload the page before you save again.",
+  "bag-already-weighed": (v) =>
+    `This bag was weighed already: ${text(v.kg)} kg on ${text(v.when)} by ${text(v.who)}.`,
+  "other-helper": () =>
+    "This was weighed in another helper's session. Nothing was saved; it waits on this device until they sign in here.",
+  "not-a-bag": (v) =>
+    `The code ${text(v.code)} is on the label of a ${text(v.label)}, not on a bag's tag. Nothing was saved; scan the bag.`,
+  "bag-already-sorted": (v) =>
+    `Bag ${text(v.code)} has been sorted already. Nothing was saved; take it off this table.`,
+  "bag-not-weighed": (v) =>
+    `Bag ${text(v.code)} has not been weighed in yet. Nothing was saved; weigh it first.`,
+  "label-in-use": (v) =>
+    `The code ${text(v.code)} is in use already. Nothing was saved; take another tag.`,
+  "bag-wrong-state": (v) =>
+    `Bag ${text(v.code)} is "${text(v.state)}", which does not lead there. Nothing was saved; scan it again to see where it stands.`,
+  "point-built-in": (v) =>
+    `${text(v.name)} is part of the program: bags without a tag are entered there. Nothing was changed.`,
+  "scale-step": () =>
+    "A scale's step is 1, 2 or 5, or ten, a hundred … times that. Nothing was saved; read d on the plate again.",
+  "scale-interval": (v) =>
+    `A class ${text(v.class)} scale has an e of ${text(v.least)} or more, no finer than d and at most ten times d. Nothing was saved; read e and d on the plate again.`,
+  "scale-max": (v) =>
+    `Max must be a whole number of steps of ${text(v.step)}. Nothing was saved; read Max on the plate again.`,
+  "scale-intervals": (v) =>
+    `Max divided by e is ${text(v.count)}; class ${text(v.class)} has ${text(v.least)} to ${text(v.most)}. Nothing was saved; read Max, e and the class on the plate again.`,
+  "colour-order": () =>
+    "The palette was changed by somebody else meanwhile. Nothing was changed; look at it again and order it anew.",
+  "tare-above-gross": (v) =>
+    `Container and sack weigh ${text(v.tareKg)} kg, more than the ${text(v.grossKg)} kg on the scale. Nothing was saved; check both.`,
+  "above-max": (v) =>
+    `${text(v.scale)} carries at most ${text(v.maxKg)} kg; ${text(v.readingKg)} kg cannot be read on it. Nothing was saved; weigh in two parts.`,
+  "not-a-step": (v) =>
+    `The scale shows steps of ${text(v.step)}. ${text(v.readingKg)} kg cannot be right. Nothing was saved; read it again.`,
+  "net-zero": () =>
+    "Nothing is left after the tare. Nothing was saved; check the reading and the tare.",
+  "future-time": (v) =>
+    `${text(v.when)} has not come yet. Nothing was saved; check the date and the clock of this device.`,
+  "too-long-ago": (v) =>
+    `${text(v.when)} is before this scheme began. Nothing was saved; check the date.`,
+  "one-kind-needs-material": () =>
+    "A bag of one kind needs its resin code, kind and colour. Nothing was saved; choose them, or leave it to sort.",
+  "unknown-point": () =>
+    "That drop-off point is not in the list any more. Nothing was saved; choose another.",
+  "unknown-scale": () =>
+    "That scale is not in the list any more. Nothing was saved; choose another.",
+  "unknown-container": () =>
+    "That container or sack is not in the list any more. Nothing was saved; choose another or type the tare.",
+  "unknown-colour": () =>
+    "That colour is not in the palette any more. Nothing was saved; choose another.",
+  "unknown-reason": () =>
+    "That reason is not in the list any more. Nothing was saved; choose another.",
+  "undo-too-late": () =>
+    "Undo works for ten minutes after saving. Nothing was changed; ask a lead or coordinator to correct it.",
+  "undo-not-yours": () => "Only the person who saved this can undo it. Nothing was changed.",
+  "undo-used-since": () =>
+    "Something was taken from it since, so it cannot be undone. Nothing was changed; it can be corrected instead.",
+  "undone-already": () => "This was undone already. Nothing was changed.",
+  "piles-empty": () => "There is no pile and no reject yet. Nothing was saved; weigh at least one.",
+  "sum-beyond-tolerance": (v) =>
+    `The piles add up to ${text(v.sumKg)} kg of ${text(v.netKg)} kg; ${text(v.differenceKg)} kg is more than the scale can explain (${text(v.toleranceKg)} kg). Nothing was saved; weigh the piles again, or say where it went.`,
+  "sum-far-above-net": (v) =>
+    `The piles add up to ${text(v.sumKg)} kg, but the bag held ${text(v.netKg)} kg. Nothing was saved; weigh the piles again, and if it stays so, confirm it.`,
+  "name-in-use": (v) =>
+    `There is already one called ${text(v.name)}. Nothing was saved; choose another name.`,
+  "email-in-use": () => "Somebody with this address is already here. Nothing was sent.",
+  "joined-already": () =>
+    "This person has set a password already. Nothing was sent; “Forgotten password” makes a new link.",
+  "link-expired": () =>
+    "This link was used already or is older than a day. Nothing was changed; ask for a new one.",
+  "password-too-short": (v) =>
+    `A password needs at least ${text(v.least)} characters. Nothing was changed; a few words in a row are easy to keep.`,
+  "password-too-long": (v) =>
+    `A password has at most ${text(v.most)} characters here. Nothing was changed; choose a shorter one.`,
+  "password-too-common": () =>
+    "This password is one of the first that anybody tries. Nothing was changed; choose another.",
+  "password-wrong": () => "The present password is not right. Nothing was changed.",
+  "last-coordinator": () =>
+    "This is the only coordinator. Nothing was changed; make somebody else coordinator first.",
+  "own-role": () =>
+    "You cannot change your own role. Nothing was changed; ask another coordinator.",
+  "ledger-short": (v) =>
+    `The book holds ${text(v.heldKg)} kg there, ${text(v.wantedKg)} kg was to be taken. Nothing was saved; count what is there.`,
+  "ledger-unbalanced": () =>
+    "The ledger refused an entry that does not add up. Nothing was saved; send the request number to whoever runs the program.",
+  "ledger-correction-of-reversal": () =>
+    "This entry takes another one back and cannot be taken back itself. Nothing was changed; correct the newer entry.",
+  "opening-refused": () =>
+    "An opening count is only possible on the scheme's first day. Nothing was saved.",
+  "zone-fixed": () =>
+    "The time zone is fixed since the first entry, because days and months rest on it. Nothing was changed.",
+  "period-invalid": () =>
+    "The last day must not be before the first. Nothing was shown; choose other days.",
+  busy: () => "The database is busy. Nothing was saved; try again in a moment.",
+  "database-unavailable": () =>
+    "The database does not answer. Nothing was saved; whoever runs the program must look at it.",
+  internal: (v) =>
+    `The program failed here, and nothing was saved. Try again; if it happens again, send the request number ${text(v.requestId)} to whoever runs the program.`,
+};
+
+/** The sentence for an error code with its values. */
+export function sentence(code: ErrorCode, values: ErrorDetail = {}): string {
+  return SENTENCES[code](values);
+}
+
+const MASS_SENTENCES: Record<MassReadingProblem, (typed: string) => string> = {
+  empty: () => "Type what the scale shows.",
+  "not-a-number": (typed) => `"${typed}" is not a weight. Type a number such as 2.340.`,
+  "could-be-thousands": (typed) =>
+    `"${typed}" could be a thousand or a fraction. Type it with a point, 1.234, or without a mark, 1234.`,
+  negative: () => "A weight cannot be below zero. Zero the scale and read it again.",
+  "too-precise": (typed) => `"${typed}" has more decimals than any scale here shows.`,
+  "too-large": (typed) => `"${typed}" is more than any scale here carries.`,
+};
+
+/** The sentence for a weight that could not be read. */
+export function massSentence(problem: MassReadingProblem, typed: string): string {
+  return MASS_SENTENCES[problem](typed);
+}
+
+/** What a contract's check says about one field: our own codes, then those of the schema library. */
+const FIELD_SENTENCES: Readonly<Record<string, string>> = {
+  empty: "This is needed.",
+  "too-long": "This is too long.",
+  "not-an-id": "This is not a number that the program gave out. Reload the page and choose again.",
+  "not-a-day": "This is not a day. Choose one such as 6 May 2026.",
+  "not-an-email": "This is not a mail address. It looks like name@example.org.",
+  "whole-number": "This is a number without decimals, such as 40.",
+  "too-few": "At least 1 is needed.",
+  "too-many": "That is more than goes in one order. Make two.",
+  "not-a-hex": "A colour value is # and six signs, such as #1f46d6.",
+  "not-a-colour": "That is no colour of the palette. Reload the page and choose again.",
+  "wrong-check": "The last character does not fit the code. Check it against the label.",
+  "wrong-length": "A code has eight characters.",
+  "wrong-symbol": "A code has only letters and figures, and no U.",
+  invalid_type: "This is missing, or of another kind than expected.",
+  too_small: "This is too small or too short.",
+  too_big: "This is too large or too long.",
+  invalid_format: "This is not written as expected.",
+  not_multiple_of: "This is not a step that is possible here.",
+  invalid_value: "This is not one of the choices.",
+  invalid_union: "This is not one of the choices.",
+  unrecognized_keys: "This is not known here.",
+};
+
+/** The sentence for one refused field; an unknown code gets the general one. */
+export function fieldSentence(code: string): string {
+  return FIELD_SENTENCES[code] ?? "This cannot be right.";
+}

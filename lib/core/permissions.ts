@@ -1,0 +1,37 @@
+/** Who may do what. One table; commands and queries ask it first, the walk test reads it too. */
+
+export const ROLES = ["donor", "volunteer", "lead", "coordinator"] as const;
+export type Role = (typeof ROLES)[number];
+
+const SHED: readonly Role[] = ["volunteer", "lead", "coordinator"];
+const LEADING: readonly Role[] = ["lead", "coordinator"];
+const COORDINATOR: readonly Role[] = ["coordinator"];
+
+export const PERMISSIONS = {
+  "account.own": ROLES,
+  "points.read": SHED,
+  "points.manage": COORDINATOR,
+  "bags.read": SHED,
+  "bags.tag": SHED,
+  "tags.order": COORDINATOR,
+  "scales.read": SHED,
+  "scales.manage": COORDINATOR,
+  "palette.manage": COORDINATOR,
+  "weighing.record": SHED,
+  "weighing.review": LEADING,
+  "sorting.record": SHED,
+  "stock.read": SHED,
+  "stock.edit": SHED,
+  "reports.read": LEADING,
+  "reports.export": COORDINATOR,
+  "ledger.verify": COORDINATOR,
+  "people.manage": COORDINATOR,
+  "settings.manage": COORDINATOR,
+} as const satisfies Record<string, readonly Role[]>;
+
+export type Permission = keyof typeof PERMISSIONS;
+
+export function mayRole(role: Role | null, permission: Permission): boolean {
+  const allowed: readonly Role[] = PERMISSIONS[permission];
+  return role !== null && allowed.includes(role);
+}

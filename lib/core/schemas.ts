@@ -1,0 +1,39 @@
+/** zod schemas that several areas' contracts share. Messages are codes; messages.ts has the words. */
+import * as z from "zod";
+import { readCode, type LabelCode } from "./bag-code";
+import { isUuidV7, type Id } from "./ids";
+import { readDay, type Day, type Instant } from "./time";
+
+/** A UUIDv7 of one noun. */
+export function idSchema<Noun extends string>() {
+  return z.string().refine(isUuidV7, "not-an-id") as unknown as z.ZodType<Id<Noun>, string>;
+}
+
+/** Made by the client; sending it twice gives the same answer. It is the id of the record made. */
+export const requestIdSchema = z.string().refine(isUuidV7, "not-an-id");
+
+export const daySchema = z
+  .string()
+  .refine((text) => readDay(text) !== null, "not-a-day") as unknown as z.ZodType<Day, string>;
+
+/** Epoch milliseconds. */
+export const instantSchema = z.number().int().min(0).max(8_640_000_000_000) as unknown as z.ZodType<
+  Instant,
+  number
+>;
+
+/** A label's code as typed or scanned; comes out in its stored form. */
+export const codeSchema = z.string().transform((text, check): LabelCode => {
+  const reading = readCode(text);
+  if (reading.ok) return reading.code;
+  check.addIssue({ code: "custom", message: reading.problem });
+  return z.NEVER;
+});
+
+/** Text that a person types into one line: trimmed, 1 to `most` characters. */
+export function lineSchema(most: number) {
+  return z.string().trim().min(1, "empty").max(most, "too-long");
+}
+
+/** A load of up to 100 tonnes in whole milligrams. */
+export const milligramsSchema = z.number().int().min(0).max(100_000_000_000);

@@ -1,0 +1,55 @@
+/** The scheme itself, its sites, receipts of requests, leases of jobs. */
+import { sql } from "drizzle-orm";
+import { check, integer, sqliteTable, text } from "drizzle-orm/sqlite-core";
+import { dayColumn, instantColumn, wholeNumbers } from "../columns";
+
+/** One row: one database is one scheme. */
+export const scheme = sqliteTable(
+  "scheme",
+  {
+    id: integer("id").primaryKey(),
+    name: text("name").notNull(),
+    timeZone: text("time_zone").notNull(),
+    /** The scheme's first day: opening counts are possible on this day only. */
+    firstDay: dayColumn("first_day").notNull(),
+    /** Secret prefix of every note's hash in the ledger, so that a short note cannot be guessed from it. */
+    noteSalt: text("note_salt").notNull(),
+    createdAt: instantColumn("created_at").notNull(),
+  },
+  (t) => [
+    check("scheme_one_row", sql`${t.id} = 1`),
+    wholeNumbers("scheme_whole_numbers", t.createdAt),
+  ],
+);
+
+export const sites = sqliteTable("sites", {
+  id: integer("id").primaryKey(),
+  name: text("name").notNull().unique(),
+});
+
+/** What a command answered; kept for good, so that the same request twice gives the same answer. */
+export const receipts = sqliteTable(
+  "receipts",
+  {
+    requestId: text("request_id").primaryKey(),
+    sender: text("sender").notNull(),
+    endpoint: text("endpoint").notNull(),
+    bodyHash: text("body_hash").notNull(),
+    answer: text("answer").notNull(),
+    at: instantColumn("at").notNull(),
+  },
+  (t) => [wholeNumbers("receipts_whole_numbers", t.at)],
+);
+
+/** A job runs in one process at a time: who holds the lease, and until when. */
+export const jobLeases = sqliteTable(
+  "job_leases",
+  {
+    name: text("name").primaryKey(),
+    holder: text("holder").notNull(),
+    until: instantColumn("until").notNull(),
+    lastFinishedAt: instantColumn("last_finished_at"),
+    lastResult: text("last_result"),
+  },
+  (t) => [wholeNumbers("job_leases_whole_numbers", t.until, t.lastFinishedAt)],
+);

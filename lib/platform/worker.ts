@@ -1,0 +1,81 @@
+/**
+ * Worker threads that run from the program's own source: long reads (exports, verify) belong there, with a
+ * connection of their own, so that no request ever waits for them.
+ */
+import "server-only";
+import path from "node:path";
+import { Worker } from "node:worker_threads";
+import { log } from "./logger";
+
+/**
+ * Starts a worker from a TypeScript file. The thread resolves modules as the server does ("react-server"
+ * makes the `server-only` guard pass).
+ *
+ * @param file below lib/cli, such as "export-worker.ts"
+ * @param workerData what the worker finds in `workerData`; copied, so plain data only
+ */
+export function startWorker(file: string, workerData: unknown): Worker {
+  // The bundler must not follow these paths: the worker is read from disk when it starts.
+  const root = process.cwd();
+  const source = path.join(/*turbopackIgnore: true*/ root, "lib", "cli", file);
+  return new Worker(/*turbopackIgnore: true*/ source, {
+    workerData,
+    execArgv: ["--conditions=react-server", "--import", "tsx"],
+  });
+}
+
+/** What a streaming worker answers to each "more". */
+export type Piece = { piece: Uint8Array } | { end: true } | { failed: string };
+
+/**
+ * The pieces of a worker as a stream. The worker makes a piece only when the reader wants one, so that a
+ * slow reader costs no memory; a reader that goes away ends the worker.
+ *
+ * @param worker answers every "more" with one {@link Piece}
+ * @param name for the log, should it fail
+ */
+export function streamFromWorker(worker: Worker, name: string): ReadableStream<Uint8Array> {
+  let settle: (() => void) | null = null;
+  let over = false;
+  const finish = (): void => {
+    over = true;
+    void worker.terminate();
+    settle?.();
+  };
+  return new ReadableStream<Uint8Array>(
+    {
+      start(controller) {
+        const fail = (cause: unknown): void => {
+          if (over) return;
+          log.error("worker-failed", cause, { name });
+          controller.error(cause);
+          finish();
+        };
+        worker.on("error", fail);
+        worker.on("exit", (code) => fail(new Error(`the worker left with code ${code}`)));
+        worker.on("message", (message: Piece) => {
+          if (over) return;
+          if ("failed" in message) return fail(new Error(message.failed));
+          if ("end" in message) {
+            controller.close();
+            return finish();
+          }
+          controller.enqueue(message.piece);
+          settle?.();
+        });
+      },
+      pull() {
+        if (over) return;
+        return new Promise<void>((resolve) => {
+          settle = resolve;
+          worker.postMessage("more");
+        });
+      },
+      cancel() {
+        finish();
+      },
+    },
+    // One piece waits at most: the next is made when the reader has taken it.
+    { highWaterMark: 1 },
+  );
+}

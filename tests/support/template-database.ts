@@ -1,0 +1,14 @@
+/** Migrates one empty database per test run; each test copies the file (never :memory:). */
+import fs from "node:fs";
+import os from "node:os";
+import path from "node:path";
+import { migrateDatabase } from "@/db/migrate";
+
+export default function setup(): () => void {
+  const folder = fs.mkdtempSync(path.join(os.tmpdir(), "bismar-test-"));
+  const file = path.join(folder, "template.db");
+  migrateDatabase(file);
+  process.env.BISMAR_TEST_TEMPLATE = file;
+  process.env.BISMAR_TEST_FOLDER = folder;
+  return () => fs.rmSync(folder, { recursive: true, force: true });
+}

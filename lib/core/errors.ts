@@ -66,6 +66,8 @@ export const ERROR_STATUS = {
   "opening-refused": 409,
   "zone-fixed": 409,
   "period-invalid": 422,
+  "verify-under-way": 409,
+  "scheme-exists": 409,
   busy: 503,
   "database-unavailable": 503,
   internal: 500,

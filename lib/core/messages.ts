@@ -121,6 +121,10 @@ const SENTENCES: Record<ErrorCode, Sentence> = {
     "The time zone is fixed since the first entry, because days and months rest on it. Nothing was changed.",
   "period-invalid": () =>
     "The last day must not be before the first. Nothing was shown; choose other days.",
+  "verify-under-way": () =>
+    "The ledger is being verified already. Wait for that to end; its result shows here.",
+  "scheme-exists": (v) =>
+    `This database holds a scheme already: ${text(v.name)}. Nothing was changed; one database is one scheme.`,
   busy: () => "The database is busy. Nothing was saved; try again in a moment.",
   "database-unavailable": () =>
     "The database does not answer. Nothing was saved; whoever runs the program must look at it.",

@@ -117,3 +117,6 @@ export const UNSORTED = 1;
 export const REJECT = 2;
 export const UNKNOWN_ORIGIN = 0;
 export const RULE_VERSION = 1;
+
+/** Name of the verifying job; its lease row keeps the last result. */
+export const VERIFY_JOB = "ledger-verify";

@@ -50,12 +50,12 @@ export function takenSince(db: Readable, actId: number): boolean {
       `select 1 from lines filled
        join lines later on later.holder_id = filled.holder_id and later.material_id = filled.material_id
        join entries e on e.id = later.entry_id
-       where filled.entry_id in (select id from entries where act_id = ?1)
+       where filled.entry_id in (select id from entries where act_id = ?)
          and filled.holder_id is not null and filled.grams > 0
-         and later.entry_id > (select max(id) from entries where act_id = ?1)
+         and later.entry_id > (select max(id) from entries where act_id = ?)
          and later.grams < 0 and e.kind <> 'reversal'
        limit 1`,
-    ).get(actId) !== undefined
+    ).get(actId, actId) !== undefined
   );
 }
 

@@ -103,7 +103,10 @@ export function correctAct(
 ): Posted {
   const act = touching(tx);
   const originals = listActEntries(tx, wrong.actId).filter((entry) => entry.kind !== "reversal");
-  if (originals.length === 0) throw new AppError("ledger-correction-of-reversal");
+  // An act that only takes back, with or without a settling entry of its own.
+  if (originals.every((entry) => entry.kind === "settling")) {
+    throw new AppError("ledger-correction-of-reversal");
+  }
   const standing = originals.filter((entry) => reversalOf(tx, entry.id) === null);
   const first = standing[0];
   if (!first) throw new AppError("undone-already");

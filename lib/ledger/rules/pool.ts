@@ -68,7 +68,7 @@ export function byMaterial(pool: Pool, grams: number): [materialId: number, gram
     .filter(([, part]) => part !== 0);
 }
 
-export function heated(parts: Parts): Parts {
+function heated(parts: Parts): Parts {
   const map = new Map<number, number>();
   addParts(
     map,
@@ -83,7 +83,7 @@ export type Taken = { materialId: number; grams: number; parts: Composition };
 /**
  * Takes one output from the pool.
  *
- * @param own the output's own material when it is a lot filled from a run: unused material comes back first
+ * @param own the output's own material when it keeps its row (a run, or a lot filled from a run): that comes first
  */
 export function takeFromPool(pool: Pool, grams: number, own: number | null): Taken[] {
   const taken: Taken[] = [];
@@ -103,13 +103,12 @@ export function takeFromPool(pool: Pool, grams: number, own: number | null): Tak
   return taken;
 }
 
-/** One line's parts from all that it took; unused returns (of the lot's own material) are not heated. */
-export function joined(taken: readonly Taken[], own: number | null, heats: boolean): Composition {
+/** One line's parts from all that it took. */
+export function joined(taken: readonly Taken[], heats: boolean): Composition {
   const sums: Record<Dimension, Map<number, number>> = { O: new Map(), H: new Map() };
   for (const piece of taken) {
-    const hot = heats && piece.materialId !== own;
     addParts(sums.O, piece.parts.O);
-    addParts(sums.H, hot ? heated(piece.parts.H) : piece.parts.H);
+    addParts(sums.H, heats ? heated(piece.parts.H) : piece.parts.H);
   }
   return { O: partsOf(sums.O), H: partsOf(sums.H) };
 }

@@ -30,7 +30,10 @@ export type EnteringLine = {
   materialId: number;
   grams: number;
 } & Reading;
-/** Into (above zero) or out of (below zero) a holder. */
+/**
+ * Into (above zero) or out of (below zero) a holder. Pieces of a blend become a line for each row that they
+ * left, whatever material their draft names.
+ */
 export type HolderLine = {
   account: "bag" | "lot" | "run" | "reject-bin" | "pieces";
   holderId: number;
@@ -42,7 +45,7 @@ export type OutsideLine = {
   account: "loss" | "difference" | "disposed" | "passed-on" | "before-opening";
   cause?: string;
   grams: number;
-  /** Only for what comes back from outside with its parts known, such as a receipt. */
+  /** Only for what comes back from outside with its parts known, such as a receipt; parts below zero. */
   from?: { materialId: number; parts: Composition };
 } & Reading;
 export type DraftLine = EnteringLine | HolderLine | OutsideLine;
@@ -165,7 +168,8 @@ const minus = (parts: Composition): Composition => ({ O: negated(parts.O), H: ne
 /**
  * Splits a draft and applies it to the holdings.
  *
- * @param kind "finish" adds one heating to whatever a run gives out, except unused returns
+ * @param kind "finish" adds one heating to whatever a run gives out; what was not used goes back before it
+ *   by an entry of kind "return", which adds none
  * @param draft lines in whole grams, summing to zero
  * @param holdings as they stand; changed by what the lines move
  * @returns lines in the order in which they are numbered: what is taken, what enters, gains, outputs
@@ -205,22 +209,19 @@ export function split(kind: EntryKind, draft: readonly DraftLine[], holdings: Ho
   const heats = kind === "finish" && fromRun;
   const outputs = outputOrder(draft.filter((line) => line.grams > 0));
   for (const line of outputs) {
-    if (isHolderLine(line)) {
-      const own = fromRun && line.account === "lot" ? line.materialId : null;
-      put(
-        finished(
-          line,
-          line.materialId,
-          line.grams,
-          joined(takeFromPool(pool, line.grams, own), own, heats),
-        ),
-      );
-    } else if (!isEntering(line)) {
-      takeFromPool(pool, line.grams, null).forEach((taken, index) => {
-        const parts = heats ? { O: taken.parts.O, H: heated(taken.parts.H) } : taken.parts;
-        put(finished(countedOnce(line, index), taken.materialId, taken.grams, parts));
-      });
+    if (isEntering(line)) continue;
+    // What goes into a run keeps its row, and so does what a run gives back to a lot of what was drawn.
+    const keepsRow = line.account === "run" || (fromRun && line.account === "lot");
+    const taken = takeFromPool(pool, line.grams, keepsRow ? line.materialId : null);
+    if (isHolderLine(line) && line.account !== "pieces") {
+      put(finished(line, line.materialId, line.grams, joined(taken, heats)));
+      continue;
     }
+    // Pieces, and whatever leaves the shed, stand in the rows that they left: a line for each.
+    taken.forEach((piece, index) => {
+      const parts = joined([piece], heats);
+      put(finished(countedOnce(line, index), piece.materialId, piece.grams, parts));
+    });
   }
   return lines;
 }
@@ -257,7 +258,7 @@ function gainsOf(
 }
 
 /** One reading that became several lines (one a row) has its error in the first of them only. */
-function countedOnce(line: OutsideLine, index: number): OutsideLine {
+function countedOnce<L extends DraftLine>(line: L, index: number): L {
   return index === 0 ? line : { ...line, mpeMilligrams: null };
 }
 

@@ -88,7 +88,13 @@ function draftOf(lines: readonly Line[]): DraftLine[] {
       mpeMilligrams: line.mpeMilligrams,
     };
     const { account, materialId, grams } = line;
-    if (line.holderId !== null) {
+    const pieces = account === "pieces" && grams > 0 ? `pieces/${line.holderId}` : null;
+    const seen = pieces === null ? undefined : outside.get(pieces);
+    const first = seen && draft[seen.index];
+    if (seen && first) {
+      draft[seen.index] = { ...first, grams: first.grams + grams };
+    } else if (line.holderId !== null) {
+      if (pieces !== null) outside.set(pieces, { index: draft.length });
       draft.push({
         account: account as "lot",
         holderId: line.holderId,

@@ -2,17 +2,12 @@
  * The catalogue of sentences (English). An error says what is wrong, what was kept and what to do.
  * It does not compile when a code has no sentence.
  */
+import { CAPTURE_SENTENCES, text, type Sentence } from "./capture-messages";
 import type { ErrorCode, ErrorDetail } from "./errors";
-import type { MassReadingProblem } from "./mass";
-
-type Sentence = (values: ErrorDetail) => string;
-
-const text = (value: string | number | null | undefined): string => String(value ?? "");
 
 const SENTENCES: Record<ErrorCode, Sentence> = {
+  ...CAPTURE_SENTENCES,
   "signed-out": () => "You are not signed in. What you typed is kept; sign in and send it again.",
-  "session-ended": () =>
-    "Your session has ended. What you typed is still here; sign in and save it again.",
   "wrong-sign-in": () => "That address and password do not fit together. Check both and try again.",
   "sign-in-slowed": (v) =>
     `Too many tries. Wait ${text(v.seconds)} seconds and try again; nothing else is needed.`,
@@ -56,14 +51,6 @@ const SENTENCES: Record<ErrorCode, Sentence> = {
     `Max divided by e is ${text(v.count)}; class ${text(v.class)} has ${text(v.least)} to ${text(v.most)}. Nothing was saved; read Max, e and the class on the plate again.`,
   "colour-order": () =>
     "The palette was changed by somebody else meanwhile. Nothing was changed; look at it again and order it anew.",
-  "tare-above-gross": (v) =>
-    `Container and sack weigh ${text(v.tareKg)} kg, more than the ${text(v.grossKg)} kg on the scale. Nothing was saved; check both.`,
-  "above-max": (v) =>
-    `${text(v.scale)} carries at most ${text(v.maxKg)} kg; ${text(v.readingKg)} kg cannot be read on it. Nothing was saved; weigh in two parts.`,
-  "not-a-step": (v) =>
-    `The scale shows steps of ${text(v.step)}. ${text(v.readingKg)} kg cannot be right. Nothing was saved; read it again.`,
-  "net-zero": () =>
-    "Nothing is left after the tare. Nothing was saved; check the reading and the tare.",
   "future-time": (v) =>
     `${text(v.when)} has not come yet. Nothing was saved; check the date and the clock of this device.`,
   "too-long-ago": (v) =>
@@ -74,8 +61,6 @@ const SENTENCES: Record<ErrorCode, Sentence> = {
     "That drop-off point is not in the list any more. Nothing was saved; choose another.",
   "unknown-scale": () =>
     "That scale is not in the list any more. Nothing was saved; choose another.",
-  "unknown-container": () =>
-    "That container or sack is not in the list any more. Nothing was saved; choose another or type the tare.",
   "unknown-colour": () =>
     "That colour is not in the palette any more. Nothing was saved; choose another.",
   "unknown-reason": () =>
@@ -128,28 +113,11 @@ const SENTENCES: Record<ErrorCode, Sentence> = {
   busy: () => "The database is busy. Nothing was saved; try again in a moment.",
   "database-unavailable": () =>
     "The database does not answer. Nothing was saved; whoever runs the program must look at it.",
-  internal: (v) =>
-    `The program failed here, and nothing was saved. Try again; if it happens again, send the request number ${text(v.requestId)} to whoever runs the program.`,
 };
 
 /** The sentence for an error code with its values. */
 export function sentence(code: ErrorCode, values: ErrorDetail = {}): string {
   return SENTENCES[code](values);
-}
-
-const MASS_SENTENCES: Record<MassReadingProblem, (typed: string) => string> = {
-  empty: () => "Type what the scale shows.",
-  "not-a-number": (typed) => `"${typed}" is not a weight. Type a number such as 2.340.`,
-  "could-be-thousands": (typed) =>
-    `"${typed}" could be a thousand or a fraction. Type it with a point, 1.234, or without a mark, 1234.`,
-  negative: () => "A weight cannot be below zero. Zero the scale and read it again.",
-  "too-precise": (typed) => `"${typed}" has more decimals than any scale here shows.`,
-  "too-large": (typed) => `"${typed}" is more than any scale here carries.`,
-};
-
-/** The sentence for a weight that could not be read. */
-export function massSentence(problem: MassReadingProblem, typed: string): string {
-  return MASS_SENTENCES[problem](typed);
 }
 
 /** What a contract's check says about one field: our own codes, then those of the schema library. */

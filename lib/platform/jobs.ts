@@ -45,7 +45,7 @@ export async function underLease(
         tx.client,
         `update job_leases set until = ?, last_finished_at = ?, last_result = ?
          where name = ? and holder = ?`,
-      ).run(now, now, result.slice(0, 200), name, holder);
+      ).run(now, now, result.slice(0, 2000), name, holder);
     });
   }
   return true;

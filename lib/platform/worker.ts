@@ -4,6 +4,7 @@
  */
 import "server-only";
 import path from "node:path";
+import { pathToFileURL } from "node:url";
 import { Worker } from "node:worker_threads";
 import { log } from "./logger";
 
@@ -12,15 +13,15 @@ import { log } from "./logger";
  * makes the `server-only` guard pass).
  *
  * @param file below lib/cli, such as "export-worker.ts"
- * @param workerData what the worker finds in `workerData`; copied, so plain data only
+ * @param job what the worker finds in `workerData.job`; copied, so plain data only
  */
-export function startWorker(file: string, workerData: unknown): Worker {
+export function startWorker(file: string, job: unknown): Worker {
   // The bundler must not follow these paths: the worker is read from disk when it starts.
-  const root = process.cwd();
-  const source = path.join(/*turbopackIgnore: true*/ root, "lib", "cli", file);
-  return new Worker(/*turbopackIgnore: true*/ source, {
-    workerData,
-    execArgv: ["--conditions=react-server", "--import", "tsx"],
+  const folder = path.join(/*turbopackIgnore: true*/ process.cwd(), "lib", "cli");
+  const start = path.join(/*turbopackIgnore: true*/ folder, "worker-start.mjs");
+  return new Worker(/*turbopackIgnore: true*/ start, {
+    workerData: { source: pathToFileURL(path.join(folder, file)).href, job },
+    execArgv: ["--conditions=react-server"],
   });
 }
 

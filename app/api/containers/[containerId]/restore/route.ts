@@ -1,0 +1,5 @@
+import { route } from "@/lib/http/route";
+import { restoreContainer } from "@/lib/scales/commands/containers";
+import { restoreContainerEndpoint } from "@/lib/scales/contract";
+
+export const POST = route(restoreContainerEndpoint, restoreContainer);

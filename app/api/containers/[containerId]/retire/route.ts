@@ -1,0 +1,5 @@
+import { route } from "@/lib/http/route";
+import { retireContainer } from "@/lib/scales/commands/containers";
+import { retireContainerEndpoint } from "@/lib/scales/contract";
+
+export const POST = route(retireContainerEndpoint, retireContainer);

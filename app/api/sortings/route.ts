@@ -1,0 +1,5 @@
+import { route } from "@/lib/http/route";
+import { closeSorting } from "@/lib/sorting/commands/close";
+import { closeSortingEndpoint } from "@/lib/sorting/contract";
+
+export const POST = route(closeSortingEndpoint, closeSorting);

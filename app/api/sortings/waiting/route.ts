@@ -1,0 +1,5 @@
+import { route } from "@/lib/http/route";
+import { waitingBagsEndpoint } from "@/lib/sorting/contract";
+import { listWaitingBags } from "@/lib/sorting/queries/waiting";
+
+export const GET = route(waitingBagsEndpoint, listWaitingBags);

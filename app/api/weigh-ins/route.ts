@@ -1,0 +1,5 @@
+import { route } from "@/lib/http/route";
+import { weighBag } from "@/lib/weighing/commands/weigh-bag";
+import { weighInEndpoint } from "@/lib/weighing/contract";
+
+export const POST = route(weighInEndpoint, weighBag);

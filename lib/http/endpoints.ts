@@ -1,0 +1,47 @@
+/**
+ * Every endpoint of the program, from the contracts. A contract that is not imported here, and a handler
+ * that serves no endpoint of the list, fail tests/integration/http.
+ */
+import type { Endpoint } from "@/lib/core/endpoint";
+import * as bags from "@/lib/bags/contract";
+import * as identity from "@/lib/identity/contract";
+import * as ledger from "@/lib/ledger/contract";
+import * as points from "@/lib/points/contract";
+import * as reports from "@/lib/reports/contract";
+import * as scales from "@/lib/scales/contract";
+import * as sorting from "@/lib/sorting/contract";
+import * as lots from "@/lib/stock/contract/lots";
+import * as palette from "@/lib/stock/contract/palette";
+import * as stock from "@/lib/stock/contract/stock";
+import * as weighing from "@/lib/weighing/contract";
+import * as own from "./own-endpoints";
+
+const CONTRACTS: readonly Readonly<Record<string, unknown>>[] = [
+  identity,
+  points,
+  bags,
+  scales,
+  ledger,
+  stock,
+  lots,
+  palette,
+  weighing,
+  sorting,
+  reports,
+  own,
+];
+
+function isEndpoint(exported: unknown): exported is Endpoint {
+  return (
+    typeof exported === "object" &&
+    exported !== null &&
+    "method" in exported &&
+    "path" in exported &&
+    "permission" in exported
+  );
+}
+
+/** In the order of the areas. */
+export const ENDPOINTS: readonly Endpoint[] = CONTRACTS.flatMap((contract) =>
+  Object.values(contract).filter(isEndpoint),
+);

@@ -1,0 +1,5 @@
+import { ForbiddenPage } from "@/components/shell/forbidden-page";
+
+export default function Forbidden() {
+  return <ForbiddenPage inFrame />;
+}

@@ -1,12 +1,5 @@
 /** A bag's states, in the order in which it passes through them, and what a label can stand for. */
-export const BAG_STATES = [
-  "printed",
-  "out",
-  "picked-up",
-  "weighed",
-  "sorted",
-  "closed",
-] as const;
+export const BAG_STATES = ["printed", "out", "picked-up", "weighed", "sorted", "closed"] as const;
 export type BagState = (typeof BAG_STATES)[number];
 
 export const BAG_STATE_NAMES: Record<BagState, string> = {

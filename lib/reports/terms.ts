@@ -26,3 +26,6 @@ export const ORIGIN_NAMES: Record<OriginType, string> = {
 export const LOOSE_ROWS = ["unsorted", "reject"] as const;
 export type LooseRow = (typeof LOOSE_ROWS)[number];
 export const LOOSE_NAMES: Record<LooseRow, string> = { unsorted: "Unsorted", reject: "Reject" };
+
+/** Rows of one page of a report's table. */
+export const ROWS_A_PAGE = 100;

@@ -4,3 +4,11 @@ export type ScaleClass = (typeof SCALE_CLASSES)[number];
 
 export const TARE_KINDS = ["container", "sack"] as const;
 export type TareKind = (typeof TARE_KINDS)[number];
+
+export const SCALE_CLASS_NAMES: Record<ScaleClass, string> = {
+  III: "Class III",
+  IIII: "Class IIII",
+  none: "Not verified",
+};
+
+export const TARE_KIND_NAMES: Record<TareKind, string> = { container: "Container", sack: "Sack" };

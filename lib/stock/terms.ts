@@ -3,7 +3,12 @@ export const COLOUR_LOOKS = ["solid", "clear", "mixed"] as const;
 export type ColourLook = (typeof COLOUR_LOOKS)[number];
 
 /** The palette that a scheme starts with (product.md, Sorting); coordinators may add and change. */
-export const FIRST_PALETTE: readonly { code: string; name: string; hex: string; look: ColourLook }[] = [
+export const FIRST_PALETTE: readonly {
+  code: string;
+  name: string;
+  hex: string;
+  look: ColourLook;
+}[] = [
   { code: "clear", name: "Clear or natural", hex: "#e6e6dc", look: "clear" },
   { code: "white", name: "White", hex: "#f5f3ec", look: "solid" },
   { code: "grey", name: "Grey", hex: "#8d9490", look: "solid" },

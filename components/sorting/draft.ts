@@ -1,0 +1,107 @@
+/** What lies on the table as typed, kept on this device until it is saved; and what it comes to. */
+import { newId } from "@/lib/core/ids";
+import type { Form, Kind, WashState } from "@/lib/core/plastics";
+import type { CloseSortingInput, PILE_POLYMERS } from "@/lib/sorting/contract";
+import { netGramsOf, type Reading } from "@/lib/weighing/rules";
+import { emptyReading, type ReadingValue } from "../weighing/form-values";
+import { readReading, type ListedTare } from "../weighing/read-form";
+
+export type PilePolymer = (typeof PILE_POLYMERS)[number];
+
+export type PileDraft = {
+  id: string;
+  polymer: PilePolymer | "";
+  colourCode: string;
+  kind: Kind | "";
+  form: Form;
+  wash: WashState;
+  reading: ReadingValue;
+};
+export type RejectDraft = { id: string; reason: string; reading: ReadingValue };
+export type Draft = { piles: PileDraft[]; rejects: RejectDraft[] };
+
+export const EMPTY_DRAFT: Draft = { piles: [], rejects: [] };
+
+/** A new pile: of the last one's polymer and kind, because piles of one bag are mostly alike. */
+export function newPile(last: PileDraft | undefined): PileDraft {
+  return {
+    id: newId(),
+    polymer: last?.polymer ?? "",
+    colourCode: "",
+    kind: last?.kind ?? "",
+    form: last?.form ?? "whole",
+    wash: last?.wash ?? "as-received",
+    reading: emptyReading(last?.reading),
+  };
+}
+
+export function newReject(last: ReadingValue | undefined): RejectDraft {
+  return { id: newId(), reason: "", reading: emptyReading(last) };
+}
+
+/** Net in grams, or null while the weight cannot be read. */
+export function netOf(value: ReadingValue, tares: readonly ListedTare[]): number | null {
+  const read = readReading(value, tares);
+  return read.ok ? netGramsOf([read.reading]) : null;
+}
+
+/** Every reading that can be read, in the order piles, rejects. */
+export function readingsOf(draft: Draft, tares: readonly ListedTare[]): Reading[] {
+  return [...draft.piles, ...draft.rejects].flatMap(({ reading }) => {
+    const read = readReading(reading, tares);
+    return read.ok ? [read.reading] : [];
+  });
+}
+
+type Body = Pick<CloseSortingInput, "piles" | "rejects">;
+type SentReading = Body["piles"][number]["reading"];
+
+/** Piles and rejects as the endpoint takes them; null while one of them is incomplete. */
+export function bodyOf(draft: Draft, tares: readonly ListedTare[]): Body | null {
+  const piles: Body["piles"] = [];
+  const rejects: Body["rejects"] = [];
+  for (const { id: _id, polymer, kind, colourCode, reading, ...rest } of draft.piles) {
+    const read = readReading(reading, tares);
+    if (!read.ok || polymer === "" || kind === "" || colourCode === "") return null;
+    // The ids come from the lists of this program; the server checks each.
+    piles.push({ ...rest, polymer, kind, colourCode, reading: read.reading as SentReading });
+  }
+  for (const { reason, reading } of draft.rejects) {
+    const read = readReading(reading, tares);
+    if (!read.ok || reason === "") return null;
+    rejects.push({ reason, reading: read.reading as SentReading });
+  }
+  return { piles, rejects };
+}
+
+/** Under an opaque id of the helper, so that one person on a shared phone never sees another's. */
+const keyOf = (helperId: string, code: string): string =>
+  `bismar-draft:sorting:${helperId}:${code}`;
+
+export function readDraft(helperId: string, code: string): Draft {
+  try {
+    const stored: unknown = JSON.parse(localStorage.getItem(keyOf(helperId, code)) ?? "null");
+    const looksRight =
+      typeof stored === "object" &&
+      stored !== null &&
+      "piles" in stored &&
+      Array.isArray(stored.piles) &&
+      "rejects" in stored &&
+      Array.isArray(stored.rejects);
+    return looksRight ? (stored as Draft) : EMPTY_DRAFT;
+  } catch {
+    // No storage, or a text that another version wrote: there is simply no draft.
+    return EMPTY_DRAFT;
+  }
+}
+
+/** Keeps the draft on this device; an empty one is forgotten. */
+export function writeDraft(helperId: string, code: string, draft: Draft): void {
+  try {
+    if (draft.piles.length + draft.rejects.length > 0) {
+      localStorage.setItem(keyOf(helperId, code), JSON.stringify(draft));
+    } else localStorage.removeItem(keyOf(helperId, code));
+  } catch {
+    // A full or forbidden storage must not stop the sorting; what is typed stays on the screen.
+  }
+}

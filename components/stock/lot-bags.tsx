@@ -1,0 +1,50 @@
+import Link from "next/link";
+import { DataTable } from "@/components/ui/data-table";
+import { formatCode } from "@/lib/core/bag-code";
+import { formatKg } from "@/lib/core/mass";
+import { dayOf, formatDay, instant } from "@/lib/core/time";
+import type { LotBag } from "@/lib/stock/queries/lots";
+
+type Props = { bags: readonly LotBag[]; count: number; timeZone: string };
+
+/** The bags whose piles went into a lot, newest first. */
+export function LotBags({ bags, count, timeZone }: Props) {
+  if (count === 0) return null;
+  return (
+    <section className="mt-8" aria-label="Bags that went in">
+      <h2 className="mb-2 text-lg">Bags that went in</h2>
+      {count > bags.length ? (
+        <p className="mb-2 text-sm text-soft">
+          The last {bags.length} of {count}.
+        </p>
+      ) : null}
+      <DataTable
+        caption="Bags that went in"
+        rows={bags}
+        rowKey={(bag) => bag.code}
+        columns={[
+          {
+            key: "code",
+            header: "Tag",
+            head: true,
+            cell: (bag) => (
+              <Link
+                href={`/sorting/${bag.code}`}
+                className="link inline-flex min-h-11 items-center font-mono"
+              >
+                {formatCode(bag.code)}
+              </Link>
+            ),
+          },
+          { key: "point", header: "Drop-off point", cell: (bag) => bag.pointName ?? "Not known" },
+          {
+            key: "sorted",
+            header: "Sorted",
+            cell: (bag) => formatDay(dayOf(instant(bag.sortedAt), timeZone)),
+          },
+          { key: "kg", header: "kg", align: "figure", cell: (bag) => formatKg(bag.grams) },
+        ]}
+      />
+    </section>
+  );
+}

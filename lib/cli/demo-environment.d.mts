@@ -1,0 +1,5 @@
+export function demoEnvironment(demo: {
+  port: number;
+  databaseFile: string;
+  base: Readonly<Record<string, string | undefined>>;
+}): Record<string, string | undefined>;

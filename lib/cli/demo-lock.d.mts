@@ -1,0 +1,1 @@
+export function takeLock(file: string): { note(values: object): void; release(): void };

@@ -1,0 +1,1 @@
+export function firstStale(root: string): string | null;

@@ -1,0 +1,146 @@
+/** Writes of containers and sacks. */
+import "server-only";
+import type * as z from "zod";
+import { recordAudit } from "@/lib/audit/commands";
+import { makeLabelIn } from "@/lib/bags/commands/labels";
+import { AppError } from "@/lib/core/errors";
+import type { Id } from "@/lib/core/ids";
+import { sameName, tidyName } from "@/lib/core/names";
+import type { Instant } from "@/lib/core/time";
+import { allow, type Context } from "@/lib/platform/context";
+import { prepared, type Tx } from "@/lib/platform/database";
+import { once } from "@/lib/platform/receipts";
+import type {
+  addContainerSchema,
+  changeContainerSchema,
+  ContainerReceipt,
+  retireContainerSchema,
+} from "../contract";
+import { getContainer, type Container } from "../queries";
+
+type ContainerId = Id<"container">;
+
+/**
+ * Adds a container, with a label of its own, or a sack, without.
+ *
+ * @throws AppError `name-in-use`
+ */
+export function addContainer(
+  ctx: Context,
+  input: z.output<typeof addContainerSchema>,
+): ContainerReceipt {
+  allow(ctx, "scales.manage");
+  return once(ctx, "POST /api/containers", input.requestId, (tx) => {
+    const id = input.requestId as ContainerId;
+    const { kind, tareMilligrams } = input;
+    const name = tidyName(input.name);
+    requireFreeName(tx, name, null);
+    const labelCode = kind === "container" ? makeLabelIn(tx, "container", id, ctx.now) : null;
+    prepared(
+      tx.client,
+      `insert into containers (id, kind, name, tare_mg, label_code, created_at, retired_at)
+       values (?, ?, ?, ?, ?, ?, null)`,
+    ).run(id, kind, name, tareMilligrams, labelCode, ctx.now);
+    recordAudit(tx, ctx, {
+      action: "containers.add",
+      subjectKind: "container",
+      subjectId: id,
+      fields: { kind, tareMilligrams },
+      personal: { name },
+    });
+    return { id, kind, name, tareMilligrams, labelCode, retiredAt: null };
+  });
+}
+
+/**
+ * Changes name or empty weight. Weigh-ins already saved keep the tare that they were saved with.
+ *
+ * @throws AppError `not-found`, `name-in-use`
+ */
+export function changeContainer(
+  ctx: Context,
+  input: z.output<typeof changeContainerSchema>,
+): ContainerReceipt {
+  allow(ctx, "scales.manage");
+  return once(ctx, `PATCH /api/containers/${input.containerId}`, input.requestId, (tx) => {
+    const before = requireContainer(tx, input.containerId);
+    const { tareMilligrams } = input;
+    const name = tidyName(input.name);
+    requireFreeName(tx, name, before.id);
+    prepared(tx.client, "update containers set name = ?, tare_mg = ? where id = ?").run(
+      name,
+      tareMilligrams,
+      before.id,
+    );
+    recordAudit(tx, ctx, {
+      action: "containers.change",
+      subjectKind: "container",
+      subjectId: before.id,
+      fields: { tareMilligrams, tareBefore: before.tareMilligrams },
+      personal: { name, nameBefore: before.name },
+    });
+    return { ...before, name, tareMilligrams };
+  });
+}
+
+/**
+ * Takes a container or sack out of the lists. Retiring a retired one changes nothing.
+ *
+ * @throws AppError `not-found`
+ */
+export function retireContainer(
+  ctx: Context,
+  input: z.output<typeof retireContainerSchema>,
+): ContainerReceipt {
+  allow(ctx, "scales.manage");
+  return once(ctx, `POST /api/containers/${input.containerId}/retire`, input.requestId, (tx) =>
+    setRetiredIn(tx, ctx, input.containerId, ctx.now, "containers.retire"),
+  );
+}
+
+/**
+ * Brings a retired container or sack back into the lists.
+ *
+ * @throws AppError `not-found`
+ */
+export function restoreContainer(
+  ctx: Context,
+  input: z.output<typeof retireContainerSchema>,
+): ContainerReceipt {
+  allow(ctx, "scales.manage");
+  return once(ctx, `POST /api/containers/${input.containerId}/restore`, input.requestId, (tx) =>
+    setRetiredIn(tx, ctx, input.containerId, null, "containers.restore"),
+  );
+}
+
+function setRetiredIn(
+  tx: Tx,
+  ctx: Context,
+  containerId: ContainerId,
+  retiredAt: Instant | null,
+  action: "containers.retire" | "containers.restore",
+): ContainerReceipt {
+  const container = requireContainer(tx, containerId);
+  if ((container.retiredAt === null) === (retiredAt === null)) return container;
+  prepared(tx.client, "update containers set retired_at = ? where id = ?").run(
+    retiredAt,
+    containerId,
+  );
+  recordAudit(tx, ctx, { action, subjectKind: "container", subjectId: containerId, fields: {} });
+  return { ...container, retiredAt };
+}
+
+function requireContainer(tx: Tx, containerId: ContainerId): Container {
+  const container = getContainer(tx, containerId);
+  if (!container) throw new AppError("not-found");
+  return container;
+}
+
+function requireFreeName(tx: Tx, name: string, except: ContainerId | null): void {
+  const others = prepared(tx.client, "select id, name from containers").all() as Pick<
+    Container,
+    "id" | "name"
+  >[];
+  const taken = others.find((other) => other.id !== except && sameName(other.name, name));
+  if (taken) throw new AppError("name-in-use", { name: taken.name }, ["name"]);
+}

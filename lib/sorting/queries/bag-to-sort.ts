@@ -1,0 +1,95 @@
+/** One bag on the table: what its piles must add up to, or how it was sorted. */
+import "server-only";
+import type * as z from "zod";
+import { getBagByCode } from "@/lib/bags/queries";
+import { formatCode } from "@/lib/core/bag-code";
+import { AppError } from "@/lib/core/errors";
+import type { BagId } from "@/lib/core/ids";
+import type { Instant } from "@/lib/core/time";
+import { heldBy } from "@/lib/ledger/queries/entries";
+import { UNSORTED } from "@/lib/ledger/terms";
+import { actorId, allow, type Context } from "@/lib/platform/context";
+import { inSnapshot, prepared, type Readable } from "@/lib/platform/database";
+import type { BagToSort, bagToSortEndpoint, SortedBag, SortedFraction } from "../contract";
+import { judgeUndo, undoUntil } from "../rules";
+import { getWeighedBag, listLoads } from "./table";
+
+/**
+ * @throws AppError `unknown-code` when the code is no bag's
+ */
+export function getBagToSort(
+  ctx: Context,
+  input: z.output<typeof bagToSortEndpoint.input>,
+): BagToSort {
+  allow(ctx, "sorting.record");
+  return inSnapshot<BagToSort>(ctx, (db) => {
+    const bag = getBagByCode(db, input.code);
+    if (!bag) throw new AppError("unknown-code", { code: formatCode(input.code) }, ["code"]);
+    const weighed = getWeighedBag(db, bag.id, bag.code);
+    return {
+      helperId: actorId(ctx),
+      code: bag.code,
+      state: bag.state,
+      pointName: bag.pointName,
+      weighedAt: weighed?.occurredAt ?? null,
+      condition: weighed?.condition ?? null,
+      netGrams: weighed ? heldBy(db, weighed.holderId, UNSORTED) : 0,
+      readings: weighed ? listLoads(db, weighed) : [],
+      scaleId: weighed?.scaleId ?? null,
+      sorted: findSorted(db, ctx, bag.id),
+    };
+  });
+}
+
+type SessionRow = Omit<SortedBag, "fractions" | "undoUntil" | "recordedAt"> & {
+  doneBy: string;
+  recordedAt: Instant;
+};
+
+/** The sorting that counts; null for a bag that waits, or went straight into a lot at the scale. */
+function findSorted(db: Readable, ctx: Context, bagId: BagId): SortedBag | null {
+  const row = prepared(
+    db.client,
+    `select s.id as sortingId, s.state, s.net_grams as netGrams, s.difference_grams as differenceGrams,
+            s.cause, s.done_by as doneBy, p.name as byName, s.recorded_at as recordedAt
+       from sorting_bags sb
+       join sorting_sessions s on s.id = sb.session_id
+       join people p on p.id = s.done_by
+      where sb.bag_id = ? and sb.live = 1`,
+  ).get(bagId) as SessionRow | undefined;
+  if (!row) return null;
+  const { doneBy, ...session } = row;
+  const mine = judgeUndo({ ...row, doneBy }, actorId(ctx), ctx.now) === "fine";
+  return {
+    ...session,
+    fractions: listFractions(db, row.sortingId),
+    undoUntil: mine ? undoUntil(row.recordedAt) : null,
+  };
+}
+
+type FractionRow = Omit<NonNullable<SortedFraction["pile"]>, "lotNumber"> & {
+  lotNumber: number | null;
+  rejectName: string | null;
+  netGrams: number;
+};
+
+function listFractions(db: Readable, sortingId: string): SortedFraction[] {
+  const found = prepared(
+    db.client,
+    `select r.polymer, r.kind, m.form, m.wash, coalesce(c.name, r.colour_code) as colourName,
+            coalesce(c.hex, '#8d9490') as colourHex, coalesce(c.look, 'solid') as colourLook,
+            l.number as lotNumber, rr.name as rejectName, f.net_grams as netGrams
+       from fractions f
+       join materials m on m.id = f.material_id
+       join "rows" r on r.id = m.row_id
+       left join colours c on c.code = r.colour_code
+       left join lots l on l.id = f.lot_id
+       left join reject_reasons rr on rr.code = f.reject_reason
+      where f.session_id = ? order by f.seq`,
+  ).all(sortingId) as FractionRow[];
+  return found.map(({ rejectName, netGrams, lotNumber, ...pile }) => ({
+    pile: lotNumber === null ? null : { ...pile, lotNumber },
+    rejectName,
+    netGrams,
+  }));
+}

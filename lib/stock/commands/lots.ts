@@ -1,0 +1,47 @@
+/** Opening lots. A material has at most one open lot that piles go to; the next one opens by itself. */
+import "server-only";
+import { makeLabelIn } from "@/lib/bags/commands/labels";
+import { newId, type LotId } from "@/lib/core/ids";
+import { ensureHolder } from "@/lib/ledger/commands/define";
+import type { Context } from "@/lib/platform/context";
+import { prepared, type Tx } from "@/lib/platform/database";
+
+export type OpenLot = {
+  lotId: LotId;
+  /** The ledger's holder of this lot. */
+  holderId: number;
+  number: number;
+  /** True when this call opened it. */
+  opened: boolean;
+};
+
+/** One site until there are more; `sites` has one row. */
+const SITE = 1;
+
+/**
+ * The lot that takes a material: the open one that was opened first, or a new one with the next number,
+ * a label of its own and a holder in the ledger. A step of a larger command, which writes the audit row.
+ *
+ * @param materialId from the ledger's ensureMaterial; never 1 (unsorted) or 2 (reject)
+ */
+export function lotForMaterialIn(tx: Tx, ctx: Context, materialId: number): OpenLot {
+  const open = prepared(
+    tx.client,
+    `select id as lotId, holder_id as holderId, number from lots
+      where material_id = ? and closed_at is null order by number limit 1`,
+  ).get(materialId) as Omit<OpenLot, "opened"> | undefined;
+  if (open) return { ...open, opened: false };
+
+  const lotId = newId<"lot">(ctx.now);
+  const code = makeLabelIn(tx, "lot", lotId, ctx.now);
+  const holderId = ensureHolder(tx, "lot", code);
+  const number = prepared(tx.client, "select coalesce(max(number), 0) + 1 from lots")
+    .pluck()
+    .get() as number;
+  prepared(
+    tx.client,
+    `insert into lots (id, number, holder_id, material_id, site_id, place, opened_at)
+     values (?, ?, ?, ?, ?, '', ?)`,
+  ).run(lotId, number, holderId, materialId, SITE, ctx.now);
+  return { lotId, holderId, number, opened: true };
+}

@@ -1,0 +1,113 @@
+/** Lots: lists, one lot's page, its movements, its place. */
+import * as z from "zod";
+import { endpoint } from "@/lib/core/endpoint";
+import { FORMS, KINDS, POLYMER_ANSWERS, WASH_STATES } from "@/lib/core/plastics";
+import { requestIdSchema } from "@/lib/core/schemas";
+import { COLOUR_LOOKS } from "../terms";
+
+/** From a path or a query string: "118". */
+const numberSchema = z
+  .union([z.number(), z.string().regex(/^\d{1,9}$/, "not-a-number")])
+  .transform(Number)
+  .pipe(z.number().int().min(1));
+
+export const materialSchema = z.object({
+  polymer: z.enum(POLYMER_ANSWERS),
+  kind: z.enum(KINDS),
+  colourCode: z.string(),
+  form: z.enum(FORMS),
+  wash: z.enum(WASH_STATES),
+});
+export type Material = z.output<typeof materialSchema>;
+
+export const lotSummarySchema = materialSchema.extend({
+  number: z.number().int(),
+  colourName: z.string(),
+  colourHex: z.string(),
+  colourLook: z.enum(COLOUR_LOOKS),
+  place: z.string(),
+  openedAt: z.number().int(),
+  closedAt: z.number().int().nullable(),
+  heldGrams: z.number().int(),
+});
+export type LotSummary = z.output<typeof lotSummarySchema>;
+
+export const listLotsEndpoint = endpoint({
+  method: "GET",
+  path: "/api/lots",
+  summary:
+    "Lots that hold something, or with state=open those that piles go to; oldest first, by polymer, colour, kind, form and wash state.",
+  permission: "stock.read",
+  input: z.object({
+    state: z.enum(["held", "open"]).default("held"),
+    polymer: z.enum(POLYMER_ANSWERS).optional(),
+    colourCode: z.string().max(40).optional(),
+    kind: z.enum(KINDS).optional(),
+    form: z.enum(FORMS).optional(),
+    wash: z.enum(WASH_STATES).optional(),
+    /** Number of the last lot of the page before. */
+    after: numberSchema.optional(),
+  }),
+  output: z.object({
+    lots: z.array(lotSummarySchema),
+    /** Pass it as `after` for the next page; null at the end. */
+    next: z.number().int().nullable(),
+  }),
+});
+
+/** The query string of the lots' page; whatever cannot be read there is left out. */
+export const lotsPageSchema = z.object({
+  polymer: z.enum(POLYMER_ANSWERS).optional().catch(undefined),
+  colour: z.string().max(40).optional().catch(undefined),
+  kind: z.enum(KINDS).optional().catch(undefined),
+  form: z.enum(FORMS).optional().catch(undefined),
+  wash: z.enum(WASH_STATES).optional().catch(undefined),
+  after: numberSchema.optional().catch(undefined),
+});
+
+export const lotMovementSchema = z.object({
+  entryId: z.number().int(),
+  seq: z.number().int(),
+  kind: z.string(),
+  occurredAt: z.number().int(),
+  bookedDay: z.string(),
+  grams: z.number().int(),
+  /** What the lot held once this was in. */
+  afterGrams: z.number().int(),
+  /** Name of who did it; null when it was the program, or the name was erased. */
+  doneBy: z.string().nullable(),
+  /** Tag of the bag that it concerns, where there is one. */
+  bagCode: z.string().nullable(),
+  /** The number of the entry that this one takes back. */
+  reverses: z.number().int().nullable(),
+});
+export type LotMovement = z.output<typeof lotMovementSchema>;
+
+export const lotMovementsEndpoint = endpoint({
+  method: "GET",
+  path: "/api/lots/{number}/movements",
+  summary: "Everything that ever went into or out of a lot, newest first, in pages.",
+  permission: "stock.read",
+  input: z.object({
+    number: numberSchema,
+    /** Entry and line of the last movement of the page before, "1204.3". */
+    before: z
+      .string()
+      .regex(/^\d{1,12}\.\d{1,6}$/, "not-a-number")
+      .optional(),
+  }),
+  output: z.object({ movements: z.array(lotMovementSchema), next: z.string().nullable() }),
+});
+
+export const setLotPlaceEndpoint = endpoint({
+  method: "PUT",
+  path: "/api/lots/{number}/place",
+  summary: "Says where a lot stands.",
+  permission: "stock.edit",
+  input: z.object({
+    requestId: requestIdSchema,
+    number: numberSchema,
+    place: z.string().trim().max(80, "too-long"),
+  }),
+  output: z.object({ number: z.number().int(), place: z.string() }),
+});

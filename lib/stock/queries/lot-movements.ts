@@ -1,0 +1,66 @@
+/** Everything that ever went into or out of one lot, read by the ledger's index of holders. */
+import "server-only";
+import type * as z from "zod";
+import { AppError } from "@/lib/core/errors";
+import { allow, type Context } from "@/lib/platform/context";
+import { inSnapshot, prepared, type Readable } from "@/lib/platform/database";
+import type { LotMovement, lotMovementsEndpoint } from "../contract/lots";
+
+const PAGE = 50;
+
+export const MOVEMENTS_SQL = `
+  select n.entry_id as entryId, n.seq, e.kind, e.occurred_at as occurredAt, e.booked_day as bookedDay,
+         n.grams, n.after as afterGrams, p.name as doneBy, e.reverses, e.subject
+    from lines n
+    join entries e on e.id = n.entry_id
+    left join people p on p.id = e.done_by
+   where n.holder_id = @holderId and n.entry_id <= @entryId and (n.entry_id < @entryId or n.seq < @seq)
+   order by n.entry_id desc, n.seq desc limit @limit`;
+
+type Row = Omit<LotMovement, "bagCode"> & { subject: string };
+
+/** The tag of the bag that a record concerns: that of its weigh-in or of its sorting. */
+function bagCodeOf(db: Readable, subject: string): string | null {
+  const [kind, id] = subject.split(":", 2);
+  const sql =
+    kind === "weigh-in"
+      ? "select b.code from weigh_ins w join bags b on b.id = w.bag_id where w.id = ?"
+      : kind === "sorting"
+        ? "select b.code from sorting_bags s join bags b on b.id = s.bag_id where s.session_id = ? limit 1"
+        : null;
+  if (!sql) return null;
+  return (prepared(db.client, sql).pluck().get(id) as string | undefined) ?? null;
+}
+
+/**
+ * One page of a lot's movements, newest first.
+ *
+ * @throws AppError `not-found` when there is no lot of that number
+ */
+export function listLotMovements(
+  ctx: Context,
+  input: z.output<typeof lotMovementsEndpoint.input>,
+): z.output<typeof lotMovementsEndpoint.output> {
+  allow(ctx, "stock.read");
+  return inSnapshot<z.output<typeof lotMovementsEndpoint.output>>(ctx, (db) => {
+    const holderId = prepared(db.client, "select holder_id from lots where number = ?")
+      .pluck()
+      .get(input.number) as number | undefined;
+    if (holderId === undefined) throw new AppError("not-found");
+    const [entryId, seq] = (input.before ?? `${Number.MAX_SAFE_INTEGER}.0`).split(".").map(Number);
+    const found = prepared(db.client, MOVEMENTS_SQL).all({
+      holderId,
+      entryId,
+      seq,
+      limit: PAGE + 1,
+    }) as Row[];
+    const movements = found
+      .slice(0, PAGE)
+      .map(({ subject, ...row }): LotMovement => ({ ...row, bagCode: bagCodeOf(db, subject) }));
+    const last = movements.at(-1);
+    return {
+      movements,
+      next: found.length > PAGE && last ? `${last.entryId}.${last.seq}` : null,
+    };
+  });
+}

@@ -1,0 +1,168 @@
+/** Lots: lists of them, and one with where its content came from. */
+import "server-only";
+import type * as z from "zod";
+import type { LotId } from "@/lib/core/ids";
+import type { OriginType } from "@/lib/ledger/terms";
+import { allow, type Context } from "@/lib/platform/context";
+import { inSnapshot, prepared, type Readable } from "@/lib/platform/database";
+import type { listLotsEndpoint, LotSummary } from "../contract/lots";
+
+const PAGE = 100;
+
+const SUMMARY = `
+  l.number, r.polymer, r.kind, r.colour_code as colourCode, m.form, m.wash,
+  coalesce(c.name, r.colour_code) as colourName, coalesce(c.hex, '#8d9490') as colourHex,
+  coalesce(c.look, 'solid') as colourLook, l.place, l.opened_at as openedAt, l.closed_at as closedAt,
+  coalesce(b.grams, 0) as heldGrams`;
+
+const FILTERED = `(@polymer is null or r.polymer = @polymer)
+     and (@colourCode is null or r.colour_code = @colourCode) and (@kind is null or r.kind = @kind)
+     and (@form is null or m.form = @form) and (@wash is null or m.wash = @wash)`;
+
+/** Walks what is held, so that a thousand emptied lots cost nothing. */
+export const HELD_LOTS_SQL = `
+  select ${SUMMARY}
+    from balances b
+    join lots l on l.holder_id = b.holder_id
+    join materials m on m.id = b.material_id
+    join rows r on r.id = m.row_id
+    left join colours c on c.code = r.colour_code
+   where b.grams > 0 and b.material_id > 2
+     and ${FILTERED} and l.number > @after
+   order by l.number limit @limit`;
+
+/**
+ * Walks the materials, of which there are few, and finds each one's open lots by its index; left to itself
+ * the planner walks every lot there ever was, by number.
+ */
+export const OPEN_LOTS_SQL = `
+  select ${SUMMARY}
+    from materials m
+    join rows r on r.id = m.row_id
+    join lots l indexed by lots_material on l.material_id = m.id and l.closed_at is null
+    left join balances b on b.holder_id = l.holder_id and b.material_id = l.material_id
+    left join colours c on c.code = r.colour_code
+   where ${FILTERED} and l.number > @after
+   order by l.number limit @limit`;
+
+/** Lots that hold something, or that piles go to: by number, which is the order of opening. */
+export function listLots(
+  ctx: Context,
+  input: z.output<typeof listLotsEndpoint.input>,
+): z.output<typeof listLotsEndpoint.output> {
+  allow(ctx, "stock.read");
+  const sql = input.state === "open" ? OPEN_LOTS_SQL : HELD_LOTS_SQL;
+  const found = prepared(ctx.db.reader.client, sql).all({
+    polymer: input.polymer ?? null,
+    colourCode: input.colourCode ?? null,
+    kind: input.kind ?? null,
+    form: input.form ?? null,
+    wash: input.wash ?? null,
+    after: input.after ?? 0,
+    limit: PAGE + 1,
+  }) as LotSummary[];
+  const lots = found.slice(0, PAGE);
+  return { lots, next: found.length > PAGE ? (lots.at(-1)?.number ?? null) : null };
+}
+
+export type LotOrigin = {
+  originNo: number;
+  type: OriginType;
+  pointName: string | null;
+  grams: number;
+};
+export type LotHeated = { times: number; grams: number };
+export type LotBag = { code: string; pointName: string | null; sortedAt: number; grams: number };
+
+export type LotView = LotSummary & {
+  lotId: LotId;
+  /** What its label's QR holds. */
+  labelCode: string;
+  origins: LotOrigin[];
+  heated: LotHeated[];
+  /** Bags whose piles went in, newest first; at most {@link MOST_BAGS}. */
+  bags: LotBag[];
+  bagCount: number;
+};
+
+const MOST_BAGS = 40;
+
+const LOT_SQL = `
+  select l.id as lotId, l.holder_id as holderId, l.material_id as materialId, h.code as labelCode, ${SUMMARY}
+    from lots l
+    join holders h on h.id = l.holder_id
+    join materials m on m.id = l.material_id
+    join rows r on r.id = m.row_id
+    left join balances b on b.holder_id = l.holder_id and b.material_id = l.material_id
+    left join colours c on c.code = r.colour_code
+   where l.number = ?`;
+
+type LotRow = LotSummary & {
+  lotId: LotId;
+  holderId: number;
+  materialId: number;
+  labelCode: string;
+};
+
+function listOrigins(db: Readable, lot: LotRow): LotOrigin[] {
+  return prepared(
+    db.client,
+    `select o.no as originNo, o.type, p.name as pointName, parts.grams
+       from parts join origins o on o.no = parts.key left join points p on p.id = o.point_id
+      where parts.holder_id = ? and parts.material_id = ? and parts.dim = 'O'
+      order by parts.grams desc, o.no`,
+  ).all(lot.holderId, lot.materialId) as LotOrigin[];
+}
+
+function listHeated(db: Readable, lot: LotRow): LotHeated[] {
+  return prepared(
+    db.client,
+    `select key as times, grams from parts
+      where holder_id = ? and material_id = ? and dim = 'H' order by key`,
+  ).all(lot.holderId, lot.materialId) as LotHeated[];
+}
+
+const BAGS_FROM = `
+  from (select session_id, sum(net_grams) as grams from fractions where lot_id = @lotId group by session_id) f
+  join sorting_sessions s on s.id = f.session_id and s.state = 'closed'
+  join sorting_bags sb on sb.session_id = s.id and sb.live = 1
+  join bags g on g.id = sb.bag_id
+  left join points p on p.id = g.point_id`;
+
+/**
+ * A bag of one kind goes straight into its lot at the scale and has no sorting; it is found through the
+ * lot's own lines, because those are indexed by holder.
+ */
+const BAGS_SQL = `
+  select code, pointName, sortedAt, grams, count(*) over () as bagCount from (
+    select g.code, p.name as pointName, s.occurred_at as sortedAt, f.grams ${BAGS_FROM}
+    union all
+    select g.code, p.name, w.occurred_at, w.net_grams
+      from lines n
+      join entries e on e.id = n.entry_id and e.kind = 'weigh-in'
+      join weigh_ins w on w.id = substr(e.subject, 10) and w.state = 'posted'
+      join bags g on g.id = w.bag_id
+      left join points p on p.id = w.point_id
+     where n.holder_id = @holderId and n.grams > 0)
+   order by sortedAt desc, code limit ${MOST_BAGS}`;
+
+/** One lot by its number, or null. */
+export function getLot(ctx: Context, number: number): LotView | null {
+  allow(ctx, "stock.read");
+  return inSnapshot<LotView | null>(ctx, (db) => {
+    const lot = prepared(db.client, LOT_SQL).get(number) as LotRow | undefined;
+    if (!lot) return null;
+    const { holderId: _holder, materialId: _material, ...summary } = lot;
+    const bags = prepared(db.client, BAGS_SQL).all({
+      lotId: lot.lotId,
+      holderId: lot.holderId,
+    }) as (LotBag & { bagCount: number })[];
+    return {
+      ...summary,
+      origins: listOrigins(db, lot),
+      heated: listHeated(db, lot),
+      bags: bags.map(({ bagCount: _count, ...bag }) => bag),
+      bagCount: bags[0]?.bagCount ?? 0,
+    };
+  });
+}

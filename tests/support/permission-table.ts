@@ -1,0 +1,129 @@
+/**
+ * Who may come where: one row for every page and every handler. It is written by hand and not read from
+ * the program, so that a permission changed by mistake shows. tests/integration/http walks the handlers
+ * and finds rows that are missing; tests/e2e walks the pages of the built program.
+ */
+import type { Role } from "@/lib/core/permissions";
+
+export const CALLERS = ["nobody", "donor", "volunteer", "lead", "coordinator", "removed"] as const;
+/** "removed" was a coordinator, and holds a cookie whose session looked alive a moment ago. */
+export type Caller = (typeof CALLERS)[number];
+
+export type Access = "anybody" | "signed-in" | "shed" | "leading" | "coordinator";
+
+const ROLES_OF: Record<Access, readonly Role[]> = {
+  anybody: ["donor", "volunteer", "lead", "coordinator"],
+  "signed-in": ["donor", "volunteer", "lead", "coordinator"],
+  shed: ["volunteer", "lead", "coordinator"],
+  leading: ["lead", "coordinator"],
+  coordinator: ["coordinator"],
+};
+
+/** A removed person is nobody. */
+export function mayEnter(access: Access, caller: Caller): boolean {
+  if (caller === "nobody" || caller === "removed") return access === "anybody";
+  return ROLES_OF[access].includes(caller);
+}
+
+/** Pages by their address; parameters in brackets, as the folders of app/ have them. */
+export const PAGES: Readonly<Record<string, Access>> = {
+  "/": "anybody",
+  "/b/[code]": "anybody",
+  "/dev/mail": "anybody",
+  "/forgotten": "anybody",
+  "/points": "anybody",
+  "/set-password/[token]": "anybody",
+  "/sign-in": "anybody",
+  "/account": "signed-in",
+  "/sorting": "shed",
+  "/sorting/[code]": "shed",
+  "/stock": "shed",
+  "/stock/lots": "shed",
+  "/stock/lots/[number]": "shed",
+  "/today": "shed",
+  "/weigh-in": "shed",
+  "/reports": "leading",
+  "/audit/ledger": "coordinator",
+  "/palette": "coordinator",
+  "/people": "coordinator",
+  "/points/manage": "coordinator",
+  "/scales": "coordinator",
+  "/scales/labels": "coordinator",
+  "/tags": "coordinator",
+  "/tags/[order]/print": "coordinator",
+  "/tags/calibration": "coordinator",
+};
+
+/** Handlers by method and address. */
+export const HANDLERS: Readonly<Record<string, Access>> = {
+  "GET /api/health": "anybody",
+  "GET /api/openapi.json": "anybody",
+  "POST /api/account/forgotten": "anybody",
+  "POST /api/account/set-password": "anybody",
+
+  "GET /api/account": "signed-in",
+  "POST /api/account/password": "signed-in",
+  "POST /api/account/sign-out-everywhere": "signed-in",
+
+  "GET /api/bags/[code]": "shed",
+  "POST /api/bags/[code]/replace-tag": "shed",
+  "POST /api/bags/spare": "shed",
+  "GET /api/colours": "shed",
+  "GET /api/containers": "shed",
+  "GET /api/lots": "shed",
+  "GET /api/lots/[number]/movements": "shed",
+  "PUT /api/lots/[number]/place": "shed",
+  "GET /api/points": "shed",
+  "GET /api/reject-reasons": "shed",
+  "GET /api/scales": "shed",
+  "GET /api/stock": "shed",
+  "POST /api/sortings": "shed",
+  "GET /api/sortings/bags/[code]": "shed",
+  "GET /api/sortings/waiting": "shed",
+  "POST /api/sortings/[id]/undo": "shed",
+  "POST /api/weigh-ins": "shed",
+  "GET /api/weigh-ins/today": "shed",
+  "POST /api/weigh-ins/[id]/undo": "shed",
+
+  "GET /api/people": "coordinator",
+  "POST /api/people": "coordinator",
+  "POST /api/people/[personId]/invite": "coordinator",
+  "PUT /api/people/[personId]/role": "coordinator",
+  "POST /api/people/[personId]/removal": "coordinator",
+  "POST /api/colours": "coordinator",
+  "PUT /api/colours": "coordinator",
+  "PATCH /api/colours/[code]": "coordinator",
+  "POST /api/colours/[code]/retire": "coordinator",
+  "POST /api/colours/[code]/restore": "coordinator",
+  "POST /api/containers": "coordinator",
+  "PATCH /api/containers/[containerId]": "coordinator",
+  "POST /api/containers/[containerId]/retire": "coordinator",
+  "POST /api/containers/[containerId]/restore": "coordinator",
+  "GET /api/ledger/verifications": "coordinator",
+  "POST /api/ledger/verifications": "coordinator",
+  "POST /api/points": "coordinator",
+  "PATCH /api/points/[pointId]": "coordinator",
+  "POST /api/points/[pointId]/close": "coordinator",
+  "POST /api/points/[pointId]/reopen": "coordinator",
+  "GET /api/reports/balance.csv": "coordinator",
+  "GET /api/reports/balance.csv-metadata.json": "coordinator",
+  "GET /api/reports/movements.csv": "coordinator",
+  "POST /api/scales": "coordinator",
+  "PUT /api/scales/[scaleId]": "coordinator",
+  "POST /api/scales/[scaleId]/retire": "coordinator",
+  "POST /api/scales/[scaleId]/restore": "coordinator",
+  "POST /api/tag-orders": "coordinator",
+};
+
+/** Handlers that are not served by route(), and why; they are in no contract. */
+export const EXCEPTIONS: Readonly<Record<string, string>> = {
+  "GET /api/auth/[...nextauth]":
+    "next-auth's own door; lib/http/auth-route.ts checks origin and size",
+  "POST /api/auth/[...nextauth]":
+    "next-auth's own door; lib/http/auth-route.ts checks origin and size",
+};
+
+/** An address with something in the place of each parameter, which need not exist. */
+export function sampleAddress(pattern: string): string {
+  return pattern.replace(/\[(?:\.\.\.)?[^\]]+\]/g, "0190b3f4-7c1a-7000-8000-000000000000");
+}

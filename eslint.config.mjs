@@ -24,6 +24,8 @@ export default tseslint.config(
       parserOptions: { projectService: true, tsconfigRootDir: import.meta.dirname },
     },
     rules: {
+      // After signing in or out the page is loaded anew on purpose: nothing of the session before stays.
+      "@next/next/no-location-assign-relative-destination": "off",
       "@typescript-eslint/no-explicit-any": "error",
       "@typescript-eslint/no-floating-promises": "error",
       "@typescript-eslint/no-unused-vars": [

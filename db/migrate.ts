@@ -4,7 +4,7 @@
  */
 import fs from "node:fs";
 import path from "node:path";
-import Database from "better-sqlite3";
+import type Database from "better-sqlite3";
 import { readMigrationFiles } from "drizzle-orm/migrator";
 import { openConnection } from "./client";
 

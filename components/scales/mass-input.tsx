@@ -26,8 +26,8 @@ export function MassInput<Values extends FieldValues, Output>({
   const [text, setText] = useState(() => {
     const start: unknown = field.value;
     if (typeof start !== "number") return "";
-    // A step has its own unit in its text, so that 10 kg stays 10 kg in a field of grams.
-    return unit === "kg" ? formatMilligrams(start) : formatStep(start);
+    // From 1 kg on a step names its unit, so that 2 kg stays 2 kg in a field of grams.
+    return unit === "kg" ? formatMilligrams(start) : formatStep(start).replace(/\u00a0g$/, "");
   });
   return (
     <WeightField

@@ -4,7 +4,7 @@ import { useState } from "react";
 import { Button } from "@/components/ui/button";
 import { ChoiceTiles } from "@/components/ui/choice-tiles";
 import { Dialog } from "@/components/ui/dialog";
-import { formatKg, formatMilligrams } from "@/lib/core/mass";
+import { formatKg } from "@/lib/core/mass";
 import { LOSS_CAUSE_NAMES, type LossCause } from "@/lib/ledger/terms";
 
 type Props = {
@@ -52,7 +52,7 @@ export function LeftoverDialog({
       }
     >
       <p className="mb-4">
-        The scale can explain {formatMilligrams(toleranceMilligrams)} kg.{" "}
+        The scale can explain {formatKg(Math.floor(toleranceMilligrams / 1000))} kg.{" "}
         {missing
           ? "Weigh the piles again, or say where it went."
           : "Weigh the piles again. If it stays so, save it; the difference is written down under its own name."}

@@ -1,4 +1,4 @@
-import { formatKg, formatMilligrams } from "@/lib/core/mass";
+import { formatKg } from "@/lib/core/mass";
 import type { SumVerdict } from "@/lib/sorting/rules";
 
 /** What stands under the bar: how piles and net compare, in a volunteer's words. */
@@ -18,7 +18,7 @@ export function sumWords(
     return { words: `${formatKg(size)} kg still to weigh.`, tone: "soft" };
   }
   return {
-    words: `${formatKg(size)} kg more than the bag held; the scale can explain ${formatMilligrams(toleranceMilligrams)} kg.`,
+    words: `${formatKg(size)} kg more than the bag held; the scale can explain ${formatKg(Math.floor(toleranceMilligrams / 1000))} kg.`,
     tone: "warn",
   };
 }

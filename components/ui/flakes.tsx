@@ -61,7 +61,7 @@ export function Flakes({
     const size = largest * (0.2 + 0.8 * random() ** 1.6);
     const layer = layers[Math.floor((number / count) * layers.length)];
     const colour = Math.floor(random() * FILLS.length);
-    if (layer) layer[colour] += chipPath(random, across, down, size);
+    if (layer) layer[colour] = (layer[colour] ?? "") + chipPath(random, across, down, size);
   }
   return (
     <svg

@@ -2,7 +2,7 @@
 import { formatCode } from "@/lib/core/bag-code";
 import { formatKg } from "@/lib/core/mass";
 import type { Kind, PolymerAnswer } from "@/lib/core/plastics";
-import type { WeighInEndpointInput } from "./types";
+import type { WeighInEndpointInput } from "./weigh-in-body";
 import type { Condition } from "@/lib/weighing/terms";
 
 /** A tare: the id of a listed thing, "" for none, "typed" with a text. */

@@ -12,7 +12,7 @@ import {
 } from "@/lib/weighing/rules";
 import type { Question } from "@/lib/weighing/terms";
 import { TYPED, type FormValues, type ReadingValue, type TareValue } from "./form-values";
-import type { WeighInEndpointInput } from "./types";
+import type { WeighInEndpointInput } from "./weigh-in-body";
 
 export type ListedTare = {
   id: string;

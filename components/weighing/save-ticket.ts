@@ -6,7 +6,7 @@ import { captureSentence } from "@/lib/core/capture-messages";
 import type { SendOutcome } from "@/lib/offline/queue";
 import type { WeighInReceipt } from "@/lib/weighing/contract";
 import { WEIGH_IN_ADDRESS } from "@/lib/weighing/terms";
-import type { WeighInEndpointInput } from "./types";
+import type { WeighInEndpointInput } from "./weigh-in-body";
 
 type Ask = Extract<WeighInReceipt, { kind: "ask" }>;
 export type KeptReceipt = Exclude<WeighInReceipt, Ask>;

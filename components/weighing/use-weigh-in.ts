@@ -10,7 +10,7 @@ import { focusField } from "./focus-field";
 import { formField, inputOf, netSoFar, readForm, type Problems } from "./read-form";
 import { rememberedScale, rememberScale } from "./remembered-scale";
 import { saveTicket, type KeptReceipt, type SaveResult } from "./save-ticket";
-import type { WeighInEndpointInput } from "./types";
+import type { WeighInEndpointInput } from "./weigh-in-body";
 import type { DeskLists } from "./use-desk-lists";
 import { useDraft } from "./use-draft";
 import { useTicketForm } from "./use-ticket-form";

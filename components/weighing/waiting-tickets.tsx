@@ -9,7 +9,7 @@ import { formatClock, type Instant } from "@/lib/core/time";
 import type { QueueItem } from "@/lib/offline/queue";
 import { WEIGH_IN_ADDRESS } from "@/lib/weighing/terms";
 import { questionWords } from "./question-words";
-import type { WeighInEndpointInput } from "./types";
+import type { WeighInEndpointInput } from "./weigh-in-body";
 import type { Asking } from "./use-weigh-in";
 
 type Props = {

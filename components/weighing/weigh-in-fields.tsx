@@ -19,7 +19,7 @@ import { focusField } from "./focus-field";
 import { emptyReading } from "./form-values";
 import { InstrumentFields } from "./instrument-fields";
 import { CODE_SENTENCES, readingRefusal } from "./read-form";
-import { LateParts } from "./late-parts";
+import { Late } from "./late";
 import { rememberScale } from "./remembered-scale";
 import { SaidNotice } from "./said-notice";
 import type { DeskLists } from "./use-desk-lists";
@@ -28,6 +28,11 @@ import { useScanned } from "./use-scanned";
 import { useSettled } from "./use-settled";
 import type { WeighInForm } from "./use-weigh-in";
 import { WeightArea } from "./weight-area";
+
+/** Parts that a first bag with a typed code needs none of. */
+const loadCamera = async () => (await import("./camera-view")).CameraView;
+const loadSpareTag = async () => (await import("./spare-tag-dialog")).SpareTagDialog;
+const loadAsk = async () => (await import("./ask-dialog")).AskDialog;
 
 type Props = {
   weighIn: WeighInForm;
@@ -82,32 +87,9 @@ export function WeighInFields({ weighIn, lists, zone, cameraOn, onCamera }: Prop
       }}
     >
       <SaidNotice said={said} zone={zone} />
-      <LateParts
-        camera={cameraOn ? { onRead: reader.take, onTrouble: closeCamera, fresh } : null}
-        spareTag={
-          spareOpen
-            ? {
-                points: lists.points,
-                onClose: () => setSpareOpen(false),
-                onTag: (code, drawn) => {
-                  setSpareOpen(false);
-                  reader.take(code);
-                  if (drawn) reader.say(drawnWords(code));
-                },
-              }
-            : null
-        }
-        ask={
-          asking
-            ? {
-                asking,
-                onYes: () => void weighIn.confirm().then(ready),
-                onNo: weighIn.notNow,
-                pending,
-                zone,
-              }
-            : null
-        }
+      <Late
+        load={loadCamera}
+        given={cameraOn ? { onRead: reader.take, onTrouble: closeCamera, fresh } : null}
       />
       {reader.note ? (
         <p role="status" className="mb-2 font-bold">
@@ -200,6 +182,36 @@ export function WeighInFields({ weighIn, lists, zone, cameraOn, onCamera }: Prop
             : "Save, next bag"}
         </Button>
       </ActionBar>
+      <Late
+        load={loadSpareTag}
+        given={
+          spareOpen
+            ? {
+                points: lists.points,
+                onClose: () => setSpareOpen(false),
+                onTag: (code, drawn) => {
+                  setSpareOpen(false);
+                  reader.take(code);
+                  if (drawn) reader.say(drawnWords(code));
+                },
+              }
+            : null
+        }
+      />
+      <Late
+        load={loadAsk}
+        given={
+          asking
+            ? {
+                asking,
+                onYes: () => void weighIn.confirm().then(ready),
+                onNo: weighIn.notNow,
+                pending,
+                zone,
+              }
+            : null
+        }
+      />
       <span className="sr-only" aria-live="polite">
         {pending ? `Saving ${formatCode(values.code)}` : ""}
       </span>

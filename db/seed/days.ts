@@ -5,7 +5,7 @@ import { addDays, dayOf, instant, type Day, type Instant } from "@/lib/core/time
 import { closeSorting } from "@/lib/sorting/commands/close";
 import { undoWeighIn } from "@/lib/weighing/commands/undo-weigh-in";
 import { weighBag } from "@/lib/weighing/commands/weigh-bag";
-import type { Cast, Shed, Tools } from "./demo";
+import type { Cast, Shed, Tools } from "./cast";
 import { MATERIALS, REJECTS, type StoryMaterial } from "./story";
 
 export type Waiting = { code: LabelCode; netGrams: number; shed: Shed; sortOn: Day };

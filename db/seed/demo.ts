@@ -6,7 +6,7 @@ import "server-only";
 import { createHash, randomUUID } from "node:crypto";
 import type { Db } from "@/db/client";
 import { orderTags } from "@/lib/bags/commands/order-tags";
-import { newId, uuidV7, type Id, type PersonId, type PointId } from "@/lib/core/ids";
+import { newId, uuidV7, type PersonId } from "@/lib/core/ids";
 import type { Role } from "@/lib/core/permissions";
 import { addDays, dayOf, instant, type Day, type Instant } from "@/lib/core/time";
 import { addPersonIn } from "@/lib/identity/commands/add-people";
@@ -17,32 +17,15 @@ import { addPoint } from "@/lib/points/commands";
 import { addContainer } from "@/lib/scales/commands/containers";
 import { addScale } from "@/lib/scales/commands/scales";
 import { setLotPlace } from "@/lib/stock/commands/place";
+import type { Cast, Shed, Tools } from "./cast";
 import { fillShed, type Waiting } from "./days";
-import { seeded, type Random } from "./random";
+import { seeded } from "./random";
 import signIns from "./sign-ins.json";
-import { MORE_VOLUNTEERS, NAMES, POINTS, SCALES, SCHEME, TARES, type StoryPoint } from "./story";
+import { MORE_VOLUNTEERS, NAMES, POINTS, SCALES, SCHEME, TARES } from "./story";
 
 const MONTHS_IN_DAYS = 243;
 const SEED = 20_260_506;
 
-export type Cast = {
-  db: Db;
-  random: Random;
-  /** A context of one of the people at a moment. */
-  as: (who: PersonId, role: Role, at: Instant) => Context;
-  requestId: (at: Instant) => string;
-  volunteers: readonly PersonId[];
-  lead: PersonId;
-  coordinator: PersonId;
-};
-
-export type Tools = {
-  bench: Id<"scale">;
-  floor: Id<"scale">;
-  tares: Record<string, { id: Id<"container">; milligrams: number }>;
-};
-
-export type Shed = { story: StoryPoint; id: PointId; codes: string[] };
 export type DemoSummary = { bags: number; sorted: number; waiting: number; entries: number };
 
 /**

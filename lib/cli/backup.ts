@@ -33,7 +33,8 @@ const ledger = verifyLedger(copy);
 copy.client.close();
 for (const suffix of ["-wal", "-shm"]) fs.rmSync(file + suffix, { force: true });
 if (integrity !== "ok") fail(`The copy is damaged (${String(integrity)}). Do not keep it.`);
-if (!ledger.ok) fail(`The copy's ledger is wrong (${ledger.problem}). Keep it, and run npm run ledger:verify.`);
+if (!ledger.ok)
+  fail(`The copy's ledger is wrong (${ledger.problem}). Keep it, and run npm run ledger:verify.`);
 
 const hash = createHash("sha256");
 const stream = fs.createReadStream(file);

@@ -37,3 +37,14 @@ export function lineSchema(most: number) {
 
 /** A load of up to 100 tonnes in whole milligrams. */
 export const milligramsSchema = z.number().int().min(0).max(100_000_000_000);
+
+/** One reading of a scale: gross, and what is taken off it. */
+export const readingSchema = z.object({
+  grossMilligrams: milligramsSchema,
+  /** A listed container: its stored tare counts, whatever the client believed it to be. */
+  containerId: idSchema<"container">().nullable(),
+  containerTareMilligrams: milligramsSchema,
+  sackId: idSchema<"container">().nullable(),
+  sackTareMilligrams: milligramsSchema,
+});
+export type ReadingInput = z.output<typeof readingSchema>;

@@ -42,9 +42,13 @@ export function inTransaction<T>(ctx: Pick<Context, "db">, work: (tx: Tx) => Not
 
 /** Runs the reads of one page on one state of the database. */
 export function inSnapshot<T>(ctx: Pick<Context, "db">, work: (db: Readable) => NotPromise<T>): T {
-  const reader = ctx.db.reader;
-  if (reader.client.inTransaction) return work(reader);
-  return reader.client.transaction(() => work(reader)).deferred();
+  return onOneState(ctx.db.reader, work);
+}
+
+/** The same for a connection of one's own, in a worker thread. */
+export function onOneState<T>(db: Readable, work: (db: Readable) => NotPromise<T>): T {
+  if (db.client.inTransaction) return work(db);
+  return db.client.transaction(() => work(db)).deferred();
 }
 
 const statements = new WeakMap<Database.Database, Map<string, Database.Statement>>();

@@ -3,10 +3,15 @@ import * as z from "zod";
 import { BAG_STATES } from "@/lib/bags/terms";
 import { endpoint } from "@/lib/core/endpoint";
 import { FORMS, KINDS, POLYMER_ANSWERS, POLYMERS, WASH_STATES } from "@/lib/core/plastics";
-import { codeSchema, idSchema, instantSchema, requestIdSchema } from "@/lib/core/schemas";
+import {
+  codeSchema,
+  idSchema,
+  instantSchema,
+  readingSchema,
+  requestIdSchema,
+} from "@/lib/core/schemas";
 import { LOSS_CAUSES } from "@/lib/ledger/terms";
 import { SCALE_CLASSES } from "@/lib/scales/terms";
-import { readingSchema } from "@/lib/weighing/contract";
 import { CONDITIONS } from "@/lib/weighing/terms";
 import {
   BAG_TO_SORT_ADDRESS,

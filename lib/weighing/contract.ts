@@ -7,7 +7,7 @@ import {
   codeSchema,
   idSchema,
   instantSchema,
-  milligramsSchema,
+  readingSchema,
   requestIdSchema,
 } from "@/lib/core/schemas";
 import {
@@ -20,16 +20,6 @@ import {
   WEIGH_IN_ADDRESS,
   WEIGH_IN_STATES,
 } from "./terms";
-
-export const readingSchema = z.object({
-  grossMilligrams: milligramsSchema,
-  /** A listed container: its stored tare counts, whatever the client believed it to be. */
-  containerId: idSchema<"container">().nullable(),
-  containerTareMilligrams: milligramsSchema,
-  sackId: idSchema<"container">().nullable(),
-  sackTareMilligrams: milligramsSchema,
-});
-export type ReadingInput = z.output<typeof readingSchema>;
 
 export const weighInInputSchema = z.object({
   /** Made by the client; the id of the weigh-in. */

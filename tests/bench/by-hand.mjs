@@ -11,11 +11,18 @@ const TOTALS = `held, collected, other_in, opening, disposed, passed_proven, pas
 /** @returns {(body: string) => string} saves one weigh-in and answers JSON */
 export function saverOf(file) {
   const db = new Database(file, { timeout: 5000 });
-  for (const pragma of ["journal_mode = WAL", "synchronous = FULL", "foreign_keys = ON", "recursive_triggers = ON"]) {
+  for (const pragma of [
+    "journal_mode = WAL",
+    "synchronous = FULL",
+    "foreign_keys = ON",
+    "recursive_triggers = ON",
+  ]) {
     db.pragma(pragma);
   }
   const sql = (text) => db.prepare(text);
-  const bagOf = sql("select b.id, b.code, b.point_id as pointId from labels l join bags b on b.id = l.subject where l.code = ?");
+  const bagOf = sql(
+    "select b.id, b.code, b.point_id as pointId from labels l join bags b on b.id = l.subject where l.code = ?",
+  );
   const originOf = sql("select no from origins where type = 'donated' and point_id = ?");
   const addOrigin = sql("insert into origins (type, point_id) values ('donated', ?)");
   const headOf = sql("select id, hash from entries order by id desc limit 1");
@@ -57,7 +64,8 @@ export function saverOf(file) {
     const day = new Date(now).toISOString().slice(0, 10);
     const grams = Math.round(body.readings[0].grossMilligrams / 1000);
     const bag = bagOf.get(body.code);
-    const origin = originOf.get(bag.pointId)?.no ?? Number(addOrigin.run(bag.pointId).lastInsertRowid);
+    const origin =
+      originOf.get(bag.pointId)?.no ?? Number(addOrigin.run(bag.pointId).lastInsertRowid);
     const head = headOf.get() ?? { id: 0, hash: "" };
     const id = head.id + 1;
     const subject = `weigh-in:${body.requestId}`;
@@ -71,7 +79,9 @@ export function saverOf(file) {
     addPart.run(id, 2, "H", 0, grams);
     const hash = createHash("sha256")
       .update(head.hash)
-      .update(JSON.stringify([id, id, "weigh-in", now, day, body.helper, subject, grams, holder, origin]))
+      .update(
+        JSON.stringify([id, id, "weigh-in", now, day, body.helper, subject, grams, holder, origin]),
+      )
       .digest("hex");
     addEntry.run(id, id, now, day, now, body.helper, body.helper, subject, head.hash, hash);
     addDay.run(day, origin, grams, grams);
@@ -80,11 +90,27 @@ export function saverOf(file) {
     addBalance.run(holder, grams);
     addHeld.run(holder, "O", origin, grams);
     addHeld.run(holder, "H", 0, grams);
-    addWeighIn.run(body.requestId, bag.id, bag.pointId, body.scaleId, body.helper, now, now, grams, id);
+    addWeighIn.run(
+      body.requestId,
+      bag.id,
+      bag.pointId,
+      body.scaleId,
+      body.helper,
+      now,
+      now,
+      grams,
+      id,
+    );
     addReading.run(body.requestId, body.readings[0].grossMilligrams);
     addAudit.run(now, body.helper, body.requestId, id);
     const answer = JSON.stringify({ kind: "posted", weighInId: body.requestId, netGrams: grams });
-    addReceipt.run(body.requestId, body.helper, createHash("sha256").update(text).digest("hex"), answer, now);
+    addReceipt.run(
+      body.requestId,
+      body.helper,
+      createHash("sha256").update(text).digest("hex"),
+      answer,
+      now,
+    );
     return answer;
   });
   return (text) => save.immediate(text);

@@ -51,7 +51,12 @@ const ctx = at(start);
 inTransaction(ctx, (tx) => {
   setUpSchemeIn(tx, ctx, { name: "Saltmarsh Plastics Shed", timeZone: "UTC", firstDay: FIRST_DAY });
   for (const role of ROLES) {
-    addPersonIn(tx, ctx, { name: `Bench ${role}`, email: `${role}@saltmarsh.example`, role, passwordHash: "none" });
+    addPersonIn(tx, ctx, {
+      name: `Bench ${role}`,
+      email: `${role}@saltmarsh.example`,
+      role,
+      passwordHash: "none",
+    });
   }
 });
 const points = Array.from({ length: POINTS }, (_, index) =>
@@ -62,7 +67,13 @@ const { origins, lots, bin } = inTransaction(ctx, (tx) => ({
   bin: ensureHolder(tx, "reject-bin", "REJECT-BIN-1"),
   lots: POLYMERS.flatMap((polymer) =>
     COLOURS.map((colourCode) => {
-      const materialId = ensureMaterial(tx, { polymer, kind: "lids", colourCode, form: "whole", wash: "as-received" });
+      const materialId = ensureMaterial(tx, {
+        polymer,
+        kind: "lids",
+        colourCode,
+        form: "whole",
+        wash: "as-received",
+      });
       return { materialId, holderId: lotForMaterialIn(tx, ctx, materialId).holderId };
     }),
   ),
@@ -93,7 +104,13 @@ for (let first = 0; first < bags; first += BAGS_AT_ONCE) {
           occurredAt,
           subject: `bench:${bag}`,
           lines: [
-            { account: "source", originNo: origins[bag % POINTS] ?? 0, materialId: UNSORTED, grams: -net, ...reading },
+            {
+              account: "source",
+              originNo: origins[bag % POINTS] ?? 0,
+              materialId: UNSORTED,
+              grams: -net,
+              ...reading,
+            },
             { account: "bag", holderId, materialId: UNSORTED, grams: net },
           ],
         },

@@ -8,7 +8,12 @@ const ROOT = path.resolve(import.meta.dirname, "../..");
 const KEPT = path.join(ROOT, ".cache/bench");
 
 /** What a filled database rests on: when one of these changes, it is filled anew. */
-const SOURCES = ["db/migrations/meta/_journal.json", "db/triggers.sql", "tests/bench/fill-ledger.ts", "lib/ledger"];
+const SOURCES = [
+  "db/migrations/meta/_journal.json",
+  "db/triggers.sql",
+  "tests/bench/fill-ledger.ts",
+  "lib/ledger",
+];
 
 function stamp(): string {
   const hash = createHash("sha256");
@@ -33,7 +38,14 @@ export function filledDatabase(lines: number): string {
   for (const suffix of ["", "-wal", "-shm"]) fs.rmSync(making + suffix, { force: true });
   execFileSync(
     process.execPath,
-    ["--conditions=react-server", "--import", "tsx", "tests/bench/fill-ledger.ts", making, String(lines)],
+    [
+      "--conditions=react-server",
+      "--import",
+      "tsx",
+      "tests/bench/fill-ledger.ts",
+      making,
+      String(lines),
+    ],
     { cwd: ROOT, stdio: ["ignore", "inherit", "inherit"] },
   );
   fs.renameSync(making, file);

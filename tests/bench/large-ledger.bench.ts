@@ -22,7 +22,8 @@ const ROUNDS = 15;
 const YEAR = "from=2025-12-01&until=2026-12-01";
 const PAGE_YEAR = "from=2025-12-01&to=2026-11-30";
 
-const median = (values: number[]): number => [...values].sort((a, b) => a - b)[Math.floor(values.length / 2)] ?? 0;
+const median = (values: number[]): number =>
+  [...values].sort((a, b) => a - b)[Math.floor(values.length / 2)] ?? 0;
 
 type Measured = { server: E2eServer; headers: Record<string, string>; delayFile: string };
 
@@ -43,12 +44,17 @@ async function page(of: Measured, address: string): Promise<number> {
   const started = performance.now();
   const response = await fetch(of.server.url + address, { headers: of.headers });
   const text = await response.text();
-  if (response.status !== 200 || !text.includes("</html>")) throw new Error(`${address}: ${response.status}`);
+  if (response.status !== 200 || !text.includes("</html>"))
+    throw new Error(`${address}: ${response.status}`);
   return performance.now() - started;
 }
 
 /** Both servers take turns, so that a change of the machine's speed meets both. */
-async function compare(large: Measured, small: Measured, address: string): Promise<[number, number]> {
+async function compare(
+  large: Measured,
+  small: Measured,
+  address: string,
+): Promise<[number, number]> {
   const times: [number[], number[]] = [[], []];
   for (let round = -3; round < ROUNDS; round += 1) {
     const a = await page(large, address);
@@ -63,9 +69,13 @@ async function compare(large: Measured, small: Measured, address: string): Promi
 const memoryMb = (pid: number): number =>
   Number(/VmRSS:\s+(\d+)/.exec(fs.readFileSync(`/proc/${pid}/status`, "utf8"))?.[1] ?? 0) / 1024;
 
-async function download(of: Measured): Promise<{ seconds: number; lines: number; grewMb: number; pauseMs: number }> {
+async function download(
+  of: Measured,
+): Promise<{ seconds: number; lines: number; grewMb: number; pauseMs: number }> {
   const pid = of.server.pid();
-  await fetch(`${of.server.url}/api/reports/movements.csv?${YEAR}`, { headers: of.headers }).then((r) => r.body?.cancel());
+  await fetch(`${of.server.url}/api/reports/movements.csv?${YEAR}`, { headers: of.headers }).then(
+    (r) => r.body?.cancel(),
+  );
   await new Promise((resolve) => setTimeout(resolve, 1500));
   fs.rmSync(of.delayFile, { force: true });
   await new Promise((resolve) => setTimeout(resolve, 500));
@@ -75,7 +85,9 @@ async function download(of: Measured): Promise<{ seconds: number; lines: number;
     most = Math.max(most, memoryMb(pid));
   }, 50);
   const started = performance.now();
-  const response = await fetch(`${of.server.url}/api/reports/movements.csv?${YEAR}`, { headers: of.headers });
+  const response = await fetch(`${of.server.url}/api/reports/movements.csv?${YEAR}`, {
+    headers: of.headers,
+  });
   if (!response.ok || !response.body) throw new Error(`movements.csv: ${response.status}`);
   let lines = 0;
   for await (const piece of response.body as unknown as AsyncIterable<Uint8Array>) {
@@ -113,12 +125,21 @@ export async function run(): Promise<BenchRow[]> {
     const rows: BenchRow[] = [];
     const pages: [string, string][] = [
       ["stock, whole page", "/stock"],
-      ["one-year report by month, point, polymer and colour, whole page", `/reports?${PAGE_YEAR}&by=month,point,polymer,colour`],
+      [
+        "one-year report by month, point, polymer and colour, whole page",
+        `/reports?${PAGE_YEAR}&by=month,point,polymer,colour`,
+      ],
       ["one-year report, totals only, whole page", `/reports?${PAGE_YEAR}`],
     ];
     for (const [figure, address] of pages) {
       const [value, held] = await compare(large, small, address);
-      rows.push({ figure, value, unit: "ms", yardstick: { name: "with 10 000 lines", value: held }, most: 2 });
+      rows.push({
+        figure,
+        value,
+        unit: "ms",
+        yardstick: { name: "with 10 000 lines", value: held },
+        most: 2,
+      });
     }
     await small.server.close();
     const csv = await download(large);

@@ -10,6 +10,9 @@ if (isMainThread && file) {
   setInterval(() => {
     // A reset is asked for by removing the file.
     if (!fs.existsSync(file)) delay.reset();
-    fs.writeFileSync(file, JSON.stringify({ maxMs: delay.max / 1e6, p99Ms: delay.percentile(99) / 1e6 }));
+    fs.writeFileSync(
+      file,
+      JSON.stringify({ maxMs: delay.max / 1e6, p99Ms: delay.percentile(99) / 1e6 }),
+    );
   }, 200).unref();
 }

@@ -15,11 +15,17 @@ export const soak = false;
 const PHONE = { width: 360, height: 740 };
 const SLOWDOWN = 4;
 /** 1.6 Mbit/s down, 0.75 up, 150 ms there and back. */
-const SLOW_NET = { offline: false, downloadThroughput: 200_000, uploadThroughput: 93_750, latency: 150 };
+const SLOW_NET = {
+  offline: false,
+  downloadThroughput: 200_000,
+  uploadThroughput: 93_750,
+  latency: 150,
+};
 const KIB = 1024;
 const ROUNDS = 5;
 
-const median = (values: number[]): number => [...values].sort((a, b) => a - b)[Math.floor(values.length / 2)] ?? 0;
+const median = (values: number[]): number =>
+  [...values].sort((a, b) => a - b)[Math.floor(values.length / 2)] ?? 0;
 
 /** Bytes of script that came over the wire, by address. */
 async function countScripts(page: Page): Promise<{ cdp: CDPSession; bytes: Map<string, number> }> {
@@ -38,14 +44,19 @@ async function countScripts(page: Page): Promise<{ cdp: CDPSession; bytes: Map<s
   return { cdp, bytes };
 }
 
-const sum = (bytes: ReadonlyMap<string, number>): number => [...bytes.values()].reduce((a, b) => a + b, 0);
+const sum = (bytes: ReadonlyMap<string, number>): number =>
+  [...bytes.values()].reduce((a, b) => a + b, 0);
 
 async function settled(page: Page): Promise<void> {
   await page.waitForLoadState("networkidle");
   await page.waitForTimeout(1500);
 }
 
-async function scriptsOf(browser: Browser, url: string, server?: E2eServer): Promise<{ before: number; engine: number }> {
+async function scriptsOf(
+  browser: Browser,
+  url: string,
+  server?: E2eServer,
+): Promise<{ before: number; engine: number }> {
   const context = await browser.newContext({ viewport: PHONE, permissions: ["camera"] });
   if (server) await server.signIn(context, "volunteer");
   const page = await context.newPage();
@@ -76,7 +87,9 @@ async function slowed(browser: Browser, server: E2eServer): Promise<{ lcp: numbe
   const lcp = await page.evaluate(
     () =>
       new Promise<number>((resolve) => {
-        new PerformanceObserver((list) => resolve(list.getEntries().at(-1)?.startTime ?? 0)).observe({
+        new PerformanceObserver((list) =>
+          resolve(list.getEntries().at(-1)?.startTime ?? 0),
+        ).observe({
           type: "largest-contentful-paint",
           buffered: true,
         });
@@ -84,7 +97,10 @@ async function slowed(browser: Browser, server: E2eServer): Promise<{ lcp: numbe
   );
   const taps: number[] = [];
   for (const resin of ["HDPE", "PP", "LDPE", "HDPE", "PET"]) {
-    const tile = page.locator("label").filter({ hasText: new RegExp(resin) }).first();
+    const tile = page
+      .locator("label")
+      .filter({ hasText: new RegExp(resin) })
+      .first();
     await tile.scrollIntoViewIfNeeded();
     taps.push(
       await tile.evaluate(
@@ -92,7 +108,9 @@ async function slowed(browser: Browser, server: E2eServer): Promise<{ lcp: numbe
           new Promise<number>((resolve) => {
             const started = performance.now();
             (element as HTMLElement).click();
-            requestAnimationFrame(() => requestAnimationFrame(() => resolve(performance.now() - started)));
+            requestAnimationFrame(() =>
+              requestAnimationFrame(() => resolve(performance.now() - started)),
+            );
           }),
       ),
     );
@@ -122,10 +140,27 @@ export async function run(): Promise<BenchRow[]> {
         unit: "KiB",
         yardstick: { name: "the framework's bare page", value: floor.before / KIB },
       },
-      { figure: "weigh-in page: script beyond the bare page", value: (own.before - floor.before) / KIB, unit: "KiB", most: 50 },
-      { figure: "scan engine, loaded when the camera starts", value: own.engine / KIB, unit: "KiB" },
-      { figure: "largest paint, processor slowed 4 times, 1.6 Mbit/s", value: median(slow.map((s) => s.lcp)), unit: "ms" },
-      { figure: "tap to shown choice, processor slowed 4 times", value: median(slow.map((s) => s.tap)), unit: "ms" },
+      {
+        figure: "weigh-in page: script beyond the bare page",
+        value: (own.before - floor.before) / KIB,
+        unit: "KiB",
+        most: 50,
+      },
+      {
+        figure: "scan engine, loaded when the camera starts",
+        value: own.engine / KIB,
+        unit: "KiB",
+      },
+      {
+        figure: "largest paint, processor slowed 4 times, 1.6 Mbit/s",
+        value: median(slow.map((s) => s.lcp)),
+        unit: "ms",
+      },
+      {
+        figure: "tap to shown choice, processor slowed 4 times",
+        value: median(slow.map((s) => s.tap)),
+        unit: "ms",
+      },
     ];
   } finally {
     await browser.close();

@@ -25,7 +25,10 @@ const BAGS = 60_000;
 /** Thousands of printed tags, put in behind the program's back: only their weighing is measured. */
 function addBags(file: string): string[] {
   const client = new Database(file);
-  const point = client.prepare("select id from points where kind = 'library'").pluck().get() as string;
+  const point = client
+    .prepare("select id from points where kind = 'library'")
+    .pluck()
+    .get() as string;
   const bag = client.prepare(
     "insert into bags (id, code, point_id, state, state_since, printed_at) values (?, ?, ?, 'printed', 0, 0)",
   );
@@ -49,7 +52,13 @@ function addBags(file: string): string[] {
   return codes;
 }
 
-type Target = { label: string; url: string; headers: Record<string, string>; codes: string[]; body: (code: string) => object };
+type Target = {
+  label: string;
+  url: string;
+  headers: Record<string, string>;
+  codes: string[];
+  body: (code: string) => object;
+};
 type Figures = { perSecond: number[]; p50: number[]; p99: number[] };
 
 async function fire(target: Target): Promise<{ perSecond: number; p50: number; p99: number }> {
@@ -75,7 +84,8 @@ async function fire(target: Target): Promise<{ perSecond: number; p50: number; p
   return { perSecond: result.requests.average, p50: result.latency.p50, p99: result.latency.p99 };
 }
 
-const median = (values: number[]): number => [...values].sort((a, b) => a - b)[Math.floor(values.length / 2)] ?? 0;
+const median = (values: number[]): number =>
+  [...values].sort((a, b) => a - b)[Math.floor(values.length / 2)] ?? 0;
 
 export async function run(): Promise<BenchRow[]> {
   const folder = fs.mkdtempSync(path.join(os.tmpdir(), "bismar-bench-"));
@@ -92,7 +102,9 @@ export async function run(): Promise<BenchRow[]> {
   const hand = await startByHand(copies[1] ?? "");
   try {
     const { cookie } = await program.session("volunteer");
-    const [{ id: scaleId } = { id: "" }] = program.query<{ id: string }>("select id from scales limit 1");
+    const [{ id: scaleId } = { id: "" }] = program.query<{ id: string }>(
+      "select id from scales limit 1",
+    );
     const [{ id: helper } = { id: "" }] = program.query<{ id: string }>(
       "select id from people where role = 'volunteer' limit 1",
     );
@@ -103,7 +115,13 @@ export async function run(): Promise<BenchRow[]> {
       helper,
       occurredAt: Date.now(),
       readings: [
-        { grossMilligrams: 2_160_000, containerId: null, containerTareMilligrams: 0, sackId: null, sackTareMilligrams: 0 },
+        {
+          grossMilligrams: 2_160_000,
+          containerId: null,
+          containerTareMilligrams: 0,
+          sackId: null,
+          sackTareMilligrams: 0,
+        },
       ],
       polymer: "mixed",
       kind: null,
@@ -121,7 +139,13 @@ export async function run(): Promise<BenchRow[]> {
         codes: [...codes],
         body,
       },
-      { label: "bare Next handler, rows by hand", url: `${bare.url}/api/save`, headers: {}, codes: [...codes], body },
+      {
+        label: "bare Next handler, rows by hand",
+        url: `${bare.url}/api/save`,
+        headers: {},
+        codes: [...codes],
+        body,
+      },
       { label: "node:http, rows by hand", url: hand.url, headers: {}, codes: [...codes], body },
     ];
     const figures: Figures[] = targets.map(() => ({ perSecond: [], p50: [], p99: [] }));
@@ -136,7 +160,13 @@ export async function run(): Promise<BenchRow[]> {
     }
     const [own, next, http] = figures;
     if (!own || !next || !http) throw new Error("three targets");
-    const row = (figure: string, unit: string, pick: (of: Figures) => number[], held: Figures, label: string): BenchRow => ({
+    const row = (
+      figure: string,
+      unit: string,
+      pick: (of: Figures) => number[],
+      held: Figures,
+      label: string,
+    ): BenchRow => ({
       figure,
       unit,
       value: median(pick(own)),

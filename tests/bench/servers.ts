@@ -21,7 +21,12 @@ async function answers(url: string, child: ChildProcess): Promise<void> {
   throw new Error(`${url} does not answer`);
 }
 
-async function running(args: string[], databaseFile: string, port: number, cwd: string): Promise<Running> {
+async function running(
+  args: string[],
+  databaseFile: string,
+  port: number,
+  cwd: string,
+): Promise<Running> {
   const child = spawn(process.execPath, args, {
     cwd,
     stdio: ["ignore", "ignore", "inherit"],
@@ -63,11 +68,21 @@ export async function startBareNext(databaseFile: string): Promise<Running> {
     isBareBuilt = true;
   }
   const port = await freePort();
-  return running([NEXT_BIN, "start", BARE, "-p", String(port), "-H", "127.0.0.1"], databaseFile, port, BARE);
+  return running(
+    [NEXT_BIN, "start", BARE, "-p", String(port), "-H", "127.0.0.1"],
+    databaseFile,
+    port,
+    BARE,
+  );
 }
 
 /** node:http and nothing else. */
 export async function startByHand(databaseFile: string): Promise<Running> {
   const port = await freePort();
-  return running([path.join(ROOT, "tests/bench/by-hand-server.mjs"), String(port)], databaseFile, port, ROOT);
+  return running(
+    [path.join(ROOT, "tests/bench/by-hand-server.mjs"), String(port)],
+    databaseFile,
+    port,
+    ROOT,
+  );
 }

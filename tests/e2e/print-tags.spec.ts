@@ -134,7 +134,8 @@ test("offsets move everything, and the calibration sheet shows them", async ({ p
     const pdf = await print(page, `/tags/${order}/print?sheet=letter-10${query}`, name);
     const [first] = renderPages(pdf, dpi);
     if (!first) throw new Error("no sheet");
-    const label = { leftMm: 0, topMm: 0, widthMm: 50, heightMm: 62 };
+    // The first label as far as its text begins.
+    const label = { leftMm: 0, topMm: 0, widthMm: 46, heightMm: 62 };
     return darkBox(cut(first, label, dpi), dpi);
   };
   const plain = await symbolAt("", "plain");
@@ -147,8 +148,8 @@ test("offsets move everything, and the calibration sheet shows them", async ({ p
   const [sheet] = renderPages(pdf, 300);
   if (!sheet) throw new Error("no sheet");
   // Inside the large cross, left of its middle: the upright arm stands at 30 mm, moved by two.
-  const arm = darkBox(cut(sheet, { leftMm: 24, topMm: 24, widthMm: 14, heightMm: 2 }, 300), 300);
-  expect(24 + (arm?.leftMm ?? 0) + (arm?.widthMm ?? 0) / 2).toBeCloseTo(32, 0);
+  const arm = darkBox(cut(sheet, { leftMm: 26, topMm: 24, widthMm: 12, heightMm: 2 }, 300), 300);
+  expect(26 + (arm?.leftMm ?? 0) + (arm?.widthMm ?? 0) / 2).toBeCloseTo(32, 0);
 });
 
 test("what a browser keeps: the sheet and its offsets, for each sheet its own", async ({

@@ -1,48 +1,23 @@
-/** The weigh-in on the built program, at 360 px: by thumb, by keyboard, without signal, with a session that ended. */
+/** The weigh-in on the built program, at 360 px: by thumb and by keyboard, with good input and bad. */
 import AxeBuilder from "@axe-core/playwright";
-import { expect, test, type Page } from "@playwright/test";
+import { expect, test } from "@playwright/test";
 import { startE2eServer, type E2eServer } from "../support/e2e-server";
+import { codeField, gross, save, shown, tickets, weighInDesk } from "../support/weigh-in-page";
 
 let server: E2eServer;
-let codes: string[];
+let desk: ReturnType<typeof weighInDesk>;
 
 test.beforeAll(async () => {
   server = await startE2eServer("shed");
-  codes = server
-    .query<{ code: string }>("select code from bags order by code")
-    .map(({ code }) => code);
+  desk = weighInDesk(server);
 });
 test.afterAll(async () => {
   await server.close();
 });
 
-const nextCode = (): string => {
-  const code = codes.pop();
-  if (!code) throw new Error("The scheme has no tag left for this test.");
-  return code;
-};
-const shown = (code: string): string => `${code.slice(0, 4)}-${code.slice(4)}`;
-const netOf = (code: string) =>
-  server.query<{ state: string; grams: number }>(
-    `select w.state, w.net_grams as grams from weigh_ins w join bags b on b.id = w.bag_id
-      where b.code = ? order by w.recorded_at`,
-    code,
-  );
-
-async function openDesk(page: Page): Promise<void> {
-  await server.signIn(page.context(), "volunteer");
-  await page.goto(`${server.url}/weigh-in`);
-  await expect(page.getByLabel("On the scale")).toBeVisible();
-}
-const codeField = (page: Page) => page.getByLabel("Bag", { exact: true });
-const gross = (page: Page) => page.getByLabel("On the scale");
-const save = (page: Page) => page.getByRole("button", { name: /^Save/ });
-const tickets = (page: Page) => page.getByRole("region", { name: "Today's tickets" });
-const waiting = (page: Page) => page.getByRole("region", { name: "Waiting to send" });
-
 test("weighs a bag with the keyboard alone, and undoes it", async ({ page }) => {
-  await openDesk(page);
-  const code = nextCode();
+  await desk.open(page);
+  const code = desk.nextCode();
   const focused = () => page.evaluate(() => document.activeElement?.getAttribute("name") ?? "");
   for (let presses = 0; presses < 20 && (await focused()) !== "code"; presses += 1) {
     await page.keyboard.press("Tab");
@@ -61,7 +36,7 @@ test("weighs a bag with the keyboard alone, and undoes it", async ({ page }) => 
   await page.keyboard.press("Shift+Tab");
   await page.keyboard.press("Enter");
   await expect(page.getByText("Saved", { exact: true })).toBeVisible();
-  expect(netOf(code)).toEqual([{ state: "posted", grams: 2160 }]);
+  expect(desk.netOf(code)).toEqual([{ state: "posted", grams: 2160 }]);
   // Ready for the next bag: the code field is empty, the crate stays.
   await expect(codeField(page)).toHaveValue("");
   await expect(page.getByLabel("Container")).not.toHaveValue("");
@@ -70,19 +45,19 @@ test("weighs a bag with the keyboard alone, and undoes it", async ({ page }) => 
   await undo.focus();
   await page.keyboard.press("Enter");
   await expect(tickets(page).getByText("Undone")).toBeVisible();
-  expect(netOf(code)).toEqual([{ state: "undone", grams: 2160 }]);
+  expect(desk.netOf(code)).toEqual([{ state: "undone", grams: 2160 }]);
   expect(server.query("select sum(grams) as grams from balances")).toEqual([{ grams: 0 }]);
 });
 
 test("tells a wrong check character before any request, and an unknown code after one", async ({
   page,
 }) => {
-  await openDesk(page);
+  await desk.open(page);
   const asked: string[] = [];
   page.on("request", (request) => {
     if (request.url().includes("/api/bags/")) asked.push(request.url());
   });
-  const right = nextCode();
+  const right = desk.nextCode();
   const wrong = right.slice(0, 7) + (right[7] === "7" ? "8" : "7");
   await codeField(page).fill(wrong);
   await expect(page.getByText("That is no code of a tag here.")).toBeVisible();
@@ -93,8 +68,8 @@ test("tells a wrong check character before any request, and an unknown code afte
 });
 
 test("gives each bad reading its own sentence and loses nothing", async ({ page }) => {
-  await openDesk(page);
-  const code = nextCode();
+  await desk.open(page);
+  const code = desk.nextCode();
   await codeField(page).fill(code);
   await page.getByLabel("Container").selectOption({ index: 1 });
   const cases = [
@@ -112,14 +87,14 @@ test("gives each bad reading its own sentence and loses nothing", async ({ page 
     await expect(gross(page)).toHaveValue(typed);
     await expect(codeField(page)).toHaveValue(code);
   }
-  expect(netOf(code)).toEqual([]);
+  expect(desk.netOf(code)).toEqual([]);
 });
 
 test("keeps the second reading of a bag for review, and says whose the first was", async ({
   page,
 }) => {
-  await openDesk(page);
-  const code = nextCode();
+  await desk.open(page);
+  const code = desk.nextCode();
   for (const weight of ["2.5", "2.6"]) {
     await codeField(page).fill(code);
     await gross(page).fill(weight);
@@ -127,12 +102,12 @@ test("keeps the second reading of a bag for review, and says whose the first was
     await expect(codeField(page)).toHaveValue("");
   }
   await expect(page.getByText(/was weighed by Test volunteer on .*: 2\.500 kg/)).toBeVisible();
-  expect(netOf(code).map(({ state }) => state)).toEqual(["posted", "for-review"]);
+  expect(desk.netOf(code).map(({ state }) => state)).toEqual(["posted", "for-review"]);
 });
 
 test("posts a bag of one kind into its lot, and the same again for the next", async ({ page }) => {
-  await openDesk(page);
-  const [one, two] = [nextCode(), nextCode()];
+  await desk.open(page);
+  const [one, two] = [desk.nextCode(), desk.nextCode()];
   await codeField(page).fill(one);
   await gross(page).fill("1.5");
   await page.getByRole("radio", { name: "HDPE" }).check();
@@ -150,122 +125,12 @@ test("posts a bag of one kind into its lot, and the same again for the next", as
   await expect(page.getByText(/which now holds 2\.000 kg/)).toBeVisible();
 });
 
-test("keeps a ticket while the server is gone, through a reload, and sends it once", async ({
-  page,
-}) => {
-  await openDesk(page);
-  const code = nextCode();
-  await page.route("**/api/weigh-ins", (route) => route.abort());
-  await codeField(page).fill(code);
-  await gross(page).fill("2.5");
-  await save(page).click();
-  await expect(page.getByText("Saved on this phone")).toBeVisible();
-  await expect(page.getByRole("link", { name: "1 waiting to send" })).toBeVisible();
-  await expect(codeField(page)).toHaveValue("");
-  expect(netOf(code)).toEqual([]);
-  await page.reload();
-  await expect(waiting(page).getByText(`${shown(code)}, 2.500 kg`)).toBeVisible();
-  await page.unroute("**/api/weigh-ins");
-  await page.getByRole("button", { name: "Send now" }).click();
-  await expect(waiting(page)).toBeHidden();
-  await expect(tickets(page).getByText(shown(code))).toBeVisible();
-  expect(netOf(code)).toEqual([{ state: "posted", grams: 2500 }]);
-});
-
-test("a receipt that got lost on the way makes no second entry", async ({ page }) => {
-  await openDesk(page);
-  const code = nextCode();
-  let lost = 0;
-  await page.route("**/api/weigh-ins", async (route) => {
-    await route.fetch();
-    lost += 1;
-    await route.abort();
-  });
-  await codeField(page).fill(code);
-  await gross(page).fill("2.5");
-  await save(page).click();
-  await expect(page.getByText("Saved on this phone")).toBeVisible();
-  expect(lost).toBe(1);
-  await page.unroute("**/api/weigh-ins");
-  // Without a tap: coming back to the page is enough.
-  await page.evaluate(() => window.dispatchEvent(new Event("focus")));
-  await expect(waiting(page)).toBeHidden();
-  expect(netOf(code)).toEqual([{ state: "posted", grams: 2500 }]);
-});
-
-test("keeps a ticket that was sent back, with its reason, to be changed by hand", async ({
-  page,
-}) => {
-  await openDesk(page);
-  const code = nextCode();
-  await page.route("**/api/weigh-ins", (route) => route.abort());
-  await codeField(page).fill(code);
-  await gross(page).fill("2.5");
-  await save(page).click();
-  await expect(page.getByText("Saved on this phone")).toBeVisible();
-  // While it waits, the scale turns out to show steps of 200 g.
-  server.query("update scales set d_mg = 200000");
-  await page.unroute("**/api/weigh-ins");
-  await page.getByRole("button", { name: "Send now" }).click();
-  await expect(waiting(page).getByText("The scale shows steps of 200 g.")).toBeVisible();
-  server.query("update scales set d_mg = 5000");
-  await waiting(page).getByRole("button", { name: "Change it" }).click();
-  await expect(codeField(page)).toHaveValue(shown(code));
-  await expect(gross(page)).toHaveValue("2.500");
-  await page.reload();
-  await gross(page).fill("2.4");
-  await save(page).click();
-  await expect(page.getByText("Saved", { exact: true })).toBeVisible();
-  expect(netOf(code)).toEqual([{ state: "posted", grams: 2400 }]);
-});
-
-test("what was typed is still there when the session ended", async ({ page }) => {
-  await openDesk(page);
-  const code = nextCode();
-  await codeField(page).fill(code);
-  await gross(page).fill("2.5");
-  server.query("update sessions set ended_at = ? where ended_at is null", Date.now());
-  await save(page).click();
-  await expect(
-    page.getByText("Your session has ended. What you typed is still here"),
-  ).toBeVisible();
-  await page.getByRole("link", { name: "Sign in" }).click();
-  await expect(page).toHaveURL(/\/sign-in/);
-  await openDesk(page);
-  await expect(codeField(page)).toHaveValue(code);
-  await expect(gross(page)).toHaveValue("2.5");
-  await save(page).click();
-  await expect(page.getByText("Saved", { exact: true })).toBeVisible();
-  expect(netOf(code)).toEqual([{ state: "posted", grams: 2500 }]);
-});
-
-test("another helper of the same phone neither sees nor sends what waits", async ({ page }) => {
-  await openDesk(page);
-  const code = nextCode();
-  await page.route("**/api/weigh-ins", (route) => route.abort());
-  await codeField(page).fill(code);
-  await gross(page).fill("2.5");
-  await save(page).click();
-  await expect(page.getByText("Saved on this phone")).toBeVisible();
-  await page.unroute("**/api/weigh-ins");
-  await server.signIn(page.context(), "lead");
-  await page.goto(`${server.url}/weigh-in`);
-  await expect(page.getByText("1 ticket waits here until its helper signs in")).toBeVisible();
-  await expect(waiting(page).getByText(shown(code))).toHaveCount(0);
-  await page.evaluate(() => window.dispatchEvent(new Event("focus")));
-  await page.waitForTimeout(1000);
-  expect(netOf(code)).toEqual([]);
-  await openDesk(page);
-  await expect(waiting(page)).toBeHidden();
-  expect(netOf(code)).toEqual([{ state: "posted", grams: 2500 }]);
-});
-
 test("says plainly that there is no camera, and the code can be typed", async ({ page }) => {
-  await openDesk(page);
+  await desk.open(page);
   await page.getByRole("button", { name: "Scan with the camera" }).click();
   await expect(page.getByText("No camera", { exact: true })).toBeVisible();
   await page.getByRole("button", { name: "Close" }).click();
-  const code = nextCode();
+  const code = desk.nextCode();
   // A hand scanner types the tag's whole address and Enter.
   await codeField(page).focus();
   await page.keyboard.type(`HTTPS://SHED.EXAMPLE/B/${code}`);
@@ -275,7 +140,7 @@ test("says plainly that there is no camera, and the code can be typed", async ({
 });
 
 test("gives a bag without a tag a spare one", async ({ page }) => {
-  await openDesk(page);
+  await desk.open(page);
   await page.getByRole("button", { name: "No tag? Give it a spare one" }).click();
   await page.getByRole("button", { name: "Draw a code for this bag" }).click();
   await expect(page.getByText(/^Write ....-.... on the bag/)).toBeVisible();
@@ -288,8 +153,8 @@ test("gives a bag without a tag a spare one", async ({ page }) => {
 for (const colorScheme of ["light", "dark"] as const) {
   test(`has no accessibility fault at 360 px, ${colorScheme}`, async ({ page }) => {
     await page.emulateMedia({ colorScheme });
-    await openDesk(page);
-    await codeField(page).fill(nextCode());
+    await desk.open(page);
+    await codeField(page).fill(desk.nextCode());
     await gross(page).fill("2.343");
     await page.getByRole("radio", { name: "PVC, other" }).check();
     await page.getByLabel("The whole bag is one kind").check();

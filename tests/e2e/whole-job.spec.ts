@@ -91,7 +91,9 @@ test("one bag from its printed tag to the CSV", async ({ page }) => {
     const desk = await context.newPage();
     await desk.goto(`${server.url}/weigh-in`);
     await desk.getByRole("button", { name: "Scan with the camera" }).click();
-    await expect(desk.getByLabel("Bag", { exact: true })).toHaveValue(formatCode(code), { timeout: 30_000 });
+    await expect(desk.getByLabel("Bag", { exact: true })).toHaveValue(formatCode(code), {
+      timeout: 30_000,
+    });
     await expect(desk.getByText("Harbour Road Library").first()).toBeVisible();
     await desk.getByLabel("On the scale").fill("3.360");
     await desk.getByLabel("Container").selectOption({ index: 1 });
@@ -135,5 +137,7 @@ test("one bag from its printed tag to the CSV", async ({ page }) => {
   expect(sum("collected_g")).toBe(2160);
   expect(sum("accepted_g")).toBe(2160);
   expect(sum("closing_g")).toBe(2160);
-  expect(csv.data.find((row) => row.colour === "blue" || row.colour === "Blue")?.closing_g).toBe("2160");
+  expect(csv.data.find((row) => row.colour === "blue" || row.colour === "Blue")?.closing_g).toBe(
+    "2160",
+  );
 });

@@ -17,7 +17,8 @@ function frameOf(picture: GreyImage): Buffer {
   for (let row = 0; row < high; row += 1) {
     const from = Math.min(picture.height - 1, Math.floor(row / scale)) * picture.width;
     for (let column = 0; column < wide; column += 1) {
-      const grey = picture.pixels[from + Math.min(picture.width - 1, Math.floor(column / scale))] ?? 255;
+      const grey =
+        picture.pixels[from + Math.min(picture.width - 1, Math.floor(column / scale))] ?? 255;
       frame[(top + row) * WIDTH + left + column] = grey;
     }
   }
@@ -28,7 +29,9 @@ function frameOf(picture: GreyImage): Buffer {
 export function writeFilm(file: string, picture: GreyImage): void {
   const frame = frameOf(picture);
   const colourless = Buffer.alloc((WIDTH * HEIGHT) / 2, 128);
-  const pieces = [Buffer.from(`YUV4MPEG2 W${WIDTH} H${HEIGHT} F30:1 Ip A1:1 C420jpeg\n`, "latin1")];
+  const pieces: Buffer[] = [
+    Buffer.from(`YUV4MPEG2 W${WIDTH} H${HEIGHT} F30:1 Ip A1:1 C420jpeg\n`, "latin1"),
+  ];
   for (let count = 0; count < FRAMES; count += 1) {
     pieces.push(Buffer.from("FRAME\n", "latin1"), frame, colourless);
   }

@@ -11,7 +11,7 @@ import { inTransaction, type Tx } from "@/lib/platform/database";
 import { setUpSortingIn } from "@/lib/sorting/commands/set-up";
 import type { CloseSortingInput } from "@/lib/sorting/contract";
 import { setUpPaletteIn } from "@/lib/stock/commands/palette";
-import type { ReadingInput } from "@/lib/weighing/contract";
+import type { ReadingInput } from "@/lib/core/schemas";
 import { newScheme, NOON, type TestScheme } from "./scheme";
 
 /** Class III, Max 30 kg, e = d = 5 g: in service ± 5 g up to 2.5 kg, ± 10 g up to 10 kg, ± 15 g beyond. */

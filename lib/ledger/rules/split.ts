@@ -12,7 +12,6 @@ import { DIMENSIONS, PHYSICAL, type Account, type Basis, type EntryKind } from "
 import { addTo, negated, type Composition, type Holding } from "./holding";
 import {
   byMaterial,
-  heated,
   inProportion,
   joined,
   poolOf,

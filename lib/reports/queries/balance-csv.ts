@@ -4,7 +4,7 @@ import { csvText } from "@/lib/core/csv";
 import { KIND_NAMES, type Kind } from "@/lib/core/plastics";
 import { dayOf, type Instant, type Period } from "@/lib/core/time";
 import { ledgerHead, type LedgerHead } from "@/lib/ledger/queries/entries";
-import type { Readable } from "@/lib/platform/database";
+import { onOneState, type Readable } from "@/lib/platform/database";
 import { requireScheme } from "@/lib/platform/scheme";
 import { figureColumns, type CsvColumn } from "../rules/csv-columns";
 import { exportName, lastDayOf } from "../rules/periods";
@@ -125,16 +125,14 @@ export function* balanceCsv(
   by: readonly Grouping[],
   now: Instant,
 ): Generator<string> {
-  const { rows, columns } = db.client
-    .transaction(() => {
-      const scheme = requireScheme(db);
-      const found = listBalance(db, period, by, dayOf(now, scheme.timeZone));
-      return {
-        rows: found,
-        columns: columnsOf(period, by, hasBalance(period, scheme.firstDay, found), ledgerHead(db)),
-      };
-    })
-    .deferred();
+  const { rows, columns } = onOneState(db, () => {
+    const scheme = requireScheme(db);
+    const found = listBalance(db, period, by, dayOf(now, scheme.timeZone));
+    return {
+      rows: found,
+      columns: columnsOf(period, by, hasBalance(period, scheme.firstDay, found), ledgerHead(db)),
+    };
+  });
   yield csvText([columns.map((column) => column.name)]);
   for (let at = 0; at < rows.length; at += PIECE) {
     yield csvText(

@@ -6,7 +6,7 @@ import { getBagByCode, type Bag } from "@/lib/bags/queries";
 import { formatCode } from "@/lib/core/bag-code";
 import { AppError } from "@/lib/core/errors";
 import type { SortingId } from "@/lib/core/ids";
-import { formatKg, formatMilligrams } from "@/lib/core/mass";
+import { formatKg } from "@/lib/core/mass";
 import { ensureHolder } from "@/lib/ledger/commands/define";
 import { postAct, type Draft } from "@/lib/ledger/commands/post";
 import { heldBy } from "@/lib/ledger/queries/entries";
@@ -160,7 +160,7 @@ function requireExplained(
     sumKg: formatKg(of.sumGrams),
     netKg: formatKg(of.netGrams),
     differenceKg: formatKg(Math.abs(verdict.differenceGrams)),
-    toleranceKg: formatMilligrams(of.tolerance),
+    toleranceKg: formatKg(Math.floor(of.tolerance / 1000)),
   };
   throw verdict.kind === "needs-cause"
     ? new AppError("sum-beyond-tolerance", values, ["cause"])

@@ -5,7 +5,7 @@ import { REJECT } from "@/lib/ledger/terms";
 import { ensureMaterial } from "@/lib/ledger/commands/define";
 import { prepared, type Tx } from "@/lib/platform/database";
 import { getContainer, type Scale } from "@/lib/scales/queries";
-import type { ReadingInput } from "@/lib/weighing/contract";
+import type { ReadingInput } from "@/lib/core/schemas";
 import {
   mpeOf,
   netGramsOf,

@@ -85,7 +85,7 @@ export type LotView = LotSummary & {
   bagCount: number;
 };
 
-const MOST_BAGS = 40;
+const MOST_BAGS = 12;
 
 const LOT_SQL = `
   select l.id as lotId, l.holder_id as holderId, l.material_id as materialId, h.code as labelCode, ${SUMMARY}

@@ -5,7 +5,8 @@ import type { Id } from "@/lib/core/ids";
 import type { Tx } from "@/lib/platform/database";
 import { getContainer, getScale, type Scale } from "@/lib/scales/queries";
 import type { TareKind } from "@/lib/scales/terms";
-import type { ReadingInput, WeighInInput, WeighInReceipt } from "../contract";
+import type { ReadingInput } from "@/lib/core/schemas";
+import type { WeighInInput, WeighInReceipt } from "../contract";
 
 /** A reading whose listed tares are the lists' own. */
 export type StoredReading = ReadingInput;

@@ -13,7 +13,7 @@ import {
   ORDERS_PER_PAGE,
 } from "@/lib/bags/queries";
 import { drawCode, readCode, type LabelCode } from "@/lib/core/bag-code";
-import { newId, type Id, type PointId } from "@/lib/core/ids";
+import { newId, type PointId } from "@/lib/core/ids";
 import { instant } from "@/lib/core/time";
 import { inTransaction } from "@/lib/platform/database";
 import { addPoint, closePoint, setUpPointsIn } from "@/lib/points/commands";
@@ -217,9 +217,7 @@ describe("tags", () => {
     const newCode = first(getTagOrderSheet(scheme.ctx(), id)?.codes ?? []);
     const input = { requestId: newId(), code, newCode };
     replaceTag(scheme.ctx("volunteer", NOON, input), input);
-    expect(listBagsOfOrder(scheme.ctx(), id).map((bag) => bag.state)).toEqual([
-      "closed",
-    ]);
+    expect(listBagsOfOrder(scheme.ctx(), id).map((bag) => bag.state)).toEqual(["closed"]);
     const again = { requestId: newId(), code: newCode };
     expect(refusalOf(() => giveSpareTag(scheme.ctx("volunteer", NOON, again), again))).toBe(
       "label-in-use",

@@ -4,19 +4,23 @@ import { describe, expect, it } from "vitest";
 
 const ROOT = path.resolve(import.meta.dirname, "../../..");
 const GOOD = {
-  NODE_ENV: "production",
+  NODE_ENV: "production" as const,
   PUBLIC_URL: "https://shed.saltmarsh.example",
   NEXTAUTH_SECRET: "0123456789abcdef0123456789abcdef",
   SMTP_URL: "smtp://127.0.0.1:2525",
 };
 
 /** Starts what instrumentation.ts starts, in a process of its own with these settings alone. */
-function start(environment: Record<string, string>) {
+function start(environment: typeof GOOD & { MAIL_MODE?: string }) {
   const call = 'import("./lib/http/start-server.ts").then((m) => m.startServer())';
   return spawnSync(
     process.execPath,
     ["--conditions=react-server", "--import", "tsx", "--input-type=module", "-e", call],
-    { cwd: ROOT, encoding: "utf8", env: { PATH: process.env.PATH, ...environment } },
+    {
+      cwd: ROOT,
+      encoding: "utf8",
+      env: { PATH: process.env.PATH, ...environment },
+    },
   );
 }
 

@@ -49,7 +49,11 @@ export function WeightField({
   const id = useId();
   const [left, setLeft] = useState(false);
   const reading = readMass(text, unit);
-  const wrong = error || ownSentence(reading, text, { optional, looked: showProblem || left });
+  const wrong = error || ownSentence(reading, text, {
+      optional,
+      looked: showProblem || left,
+      asked: showProblem,
+    });
   const huge = size === "huge";
   const input = (
     <input
@@ -123,10 +127,13 @@ function hugeSize(text: string): string {
 function ownSentence(
   reading: MassReading,
   text: string,
-  when: { optional: boolean; looked: boolean },
+  when: { optional: boolean; looked: boolean; asked: boolean },
 ): string | null {
   if (reading.ok) return null;
-  if (reading.problem === "empty" && (when.optional || !when.looked)) return null;
+  // An empty field is told when it is needed, on saving: the next bag's form begins with one.
+  if (reading.problem === "empty") {
+    return when.asked && !when.optional ? massSentence("empty", "") : null;
+  }
   if (reading.problem === "could-be-thousands" || when.looked) {
     return massSentence(reading.problem, text.trim());
   }

@@ -24,14 +24,6 @@ export const IN_THE_SHED = ["bag", "lot", "run", "reject-bin"] as const;
 export const HOLDER_KINDS = ["bag", "lot", "run", "reject-bin", "batch"] as const;
 export type HolderKind = (typeof HOLDER_KINDS)[number];
 
-export const HOLDER_ACCOUNT: Record<HolderKind, PhysicalAccount> = {
-  bag: "bag",
-  lot: "lot",
-  run: "run",
-  "reject-bin": "reject-bin",
-  batch: "pieces",
-};
-
 export const ORIGIN_TYPES = [
   "donated",
   "collector",
@@ -82,7 +74,6 @@ export const LOSS_CAUSE_NAMES: Record<LossCause, string> = {
   cuttings: "Cuttings",
   spilled: "Spilled",
 };
-export const PASSED_CAUSES = ["proven", "unproven"] as const;
 
 export const BASES = ["checked", "unchecked", "estimated", "imported", "stated"] as const;
 export type Basis = (typeof BASES)[number];

@@ -41,7 +41,9 @@ function tokensAfter(opening: RegExp): Tokens {
   const found = block
     .slice(0, block.indexOf("}"))
     .matchAll(/--color-([a-z-]+):\s*(#[0-9a-f]{6});/g);
-  return Object.fromEntries([...found].map(([, name, hex]): [string, string] => [name ?? "", hex ?? ""]));
+  return Object.fromEntries(
+    [...found].map(([, name, hex]): [string, string] => [name ?? "", hex ?? ""]),
+  );
 }
 
 const light = tokensAfter(/@theme \{/);

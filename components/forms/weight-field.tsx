@@ -49,7 +49,9 @@ export function WeightField({
   const id = useId();
   const [left, setLeft] = useState(false);
   const reading = readMass(text, unit);
-  const wrong = error || ownSentence(reading, text, {
+  const wrong =
+    error ||
+    ownSentence(reading, text, {
       optional,
       looked: showProblem || left,
       asked: showProblem,
@@ -114,7 +116,7 @@ export function WeightField({
 }
 
 const HUGE =
-  "field-sizing-content min-w-[2ch] max-w-full rounded-control bg-transparent font-mono font-bold leading-none tracking-tighter text-ink placeholder:text-soft aria-invalid:text-bad";
+  "field-sizing-content min-w-[2ch] max-w-full rounded-control bg-transparent font-mono font-bold leading-none tracking-tighter text-ink placeholder:font-normal placeholder:text-soft aria-invalid:text-bad";
 
 /** A longer figure is set smaller, so that all of it stays in sight on the narrowest phone. */
 function hugeSize(text: string): string {

@@ -78,7 +78,7 @@ test("splits a bag into piles and a reject, keeps them through a reload, and tak
   await page.keyboard.press("Enter");
   await expect(page.getByText("of 2.160 kg")).toBeVisible();
 
-  await addPile(page, "Blue", "1,295");
+  await addPile(page, "Blue", "1.295");
   await addPile(page, "Light blue", "0.52");
   await addPile(page, "White", "0.23");
   await expect(page.getByText("0.115 kg still to weigh.")).toBeVisible();
@@ -145,7 +145,7 @@ test("keeps the piles when the server is gone, and saves them when it is back", 
   await addPile(page, "Green", "1");
   await server.stop();
   await save(page).click();
-  await expect(page.getByText("The server did not answer")).toBeVisible();
+  await expect(page.getByText("The server did not answer", { exact: true })).toBeVisible();
   await server.start();
   await save(page).click();
   await expect(page.getByText("Sorted by")).toBeVisible();

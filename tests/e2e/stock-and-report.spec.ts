@@ -71,11 +71,11 @@ test("shows the shelf, a cell's lots and a lot's movements", async ({ page }) =>
     .click();
   await expect(page.getByRole("heading", { name: "Every movement" })).toBeVisible();
   await expectAccessible(page);
-  await page.getByLabel("Place").fill("Rack B, shelf 2");
+  await page.getByLabel("Place", { exact: true }).fill("Rack B, shelf 2");
   await page.getByRole("button", { name: "Save place" }).click();
   await expect(page.getByRole("button", { name: "Saved" })).toBeVisible();
   await page.reload();
-  await expect(page.getByLabel("Place")).toHaveValue("Rack B, shelf 2");
+  await expect(page.getByLabel("Place", { exact: true })).toHaveValue("Rack B, shelf 2");
 });
 
 test("keeps the stock fresh by itself, and its filter through a reload", async ({ page }) => {

@@ -13,6 +13,7 @@ export default tseslint.config(
       "test-results/**",
       "playwright-report/**",
       "db/migrations/**",
+      "**/.next/**",
     ],
   },
   js.configs.recommended,

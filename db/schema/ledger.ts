@@ -87,7 +87,13 @@ export const holders = sqliteTable(
     kind: text("kind", { enum: HOLDER_KINDS }).notNull(),
     code: text("code").notNull().unique(),
   },
-  (t) => [oneOf("holders_kind", t.kind, HOLDER_KINDS)],
+  (t) => [
+    oneOf("holders_kind", t.kind, HOLDER_KINDS),
+    /** What is in work is read without meeting a single bag or lot. */
+    index("holders_runs")
+      .on(t.id)
+      .where(sql`${t.kind} = 'run'`),
+  ],
 );
 
 export const entries = sqliteTable(
@@ -178,6 +184,9 @@ export const lines = sqliteTable(
     index("lines_holder")
       .on(t.holderId, t.entryId)
       .where(sql`${t.holderId} is not null`),
+    index("lines_runs")
+      .on(t.entryId, t.grams)
+      .where(sql`${t.account} = 'run'`),
   ],
 );
 

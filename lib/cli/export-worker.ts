@@ -14,6 +14,8 @@ const port = parentPort;
 if (!port) throw new Error("This file is a worker; lib/platform/worker.ts starts it.");
 
 const db = openConnection(job.databaseFile, "reader");
+// It reads every page once, in order: a large cache would only hold what is not asked for again.
+db.client.pragma("cache_size = -2000");
 const pieces =
   job.what === "balance"
     ? balanceCsv(db, job.period, job.by, job.now)

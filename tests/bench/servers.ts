@@ -6,6 +6,7 @@ import { tryPort } from "@/lib/cli/ports.mjs";
 
 const ROOT = path.resolve(import.meta.dirname, "../..");
 const BARE = path.join(ROOT, "tests/bench/bare-next");
+const NEXT = path.join(ROOT, NEXT_BIN);
 
 export type Running = { url: string; pid: number; close: () => Promise<void> };
 
@@ -60,7 +61,7 @@ async function freePort(): Promise<number> {
 /** The framework's own bare application, built once in a run. */
 export async function startBareNext(databaseFile: string): Promise<Running> {
   if (!isBareBuilt) {
-    execFileSync(process.execPath, [NEXT_BIN, "build", BARE], {
+    execFileSync(process.execPath, [NEXT, "build", BARE], {
       cwd: BARE,
       stdio: ["ignore", "ignore", "inherit"],
       env: { ...process.env, NODE_ENV: "production", NEXT_TELEMETRY_DISABLED: "1" },
@@ -69,7 +70,7 @@ export async function startBareNext(databaseFile: string): Promise<Running> {
   }
   const port = await freePort();
   return running(
-    [NEXT_BIN, "start", BARE, "-p", String(port), "-H", "127.0.0.1"],
+    [NEXT, "start", BARE, "-p", String(port), "-H", "127.0.0.1"],
     databaseFile,
     port,
     BARE,

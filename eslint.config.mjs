@@ -5,7 +5,6 @@ import tseslint from "typescript-eslint";
 export default tseslint.config(
   {
     ignores: [
-      ".next/**",
       ".cache/**",
       "data/**",
       "node_modules/**",

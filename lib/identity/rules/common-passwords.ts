@@ -12,31 +12,31 @@ const WORDS = `
 31415926535 3141592654 5544332211 741852963 7418529630 789456123 7894561230 9638527410
 9876543210 a1b2c3d4e5 a1b2c3d4e5f6 aabbcc abc123abc123 abcabc abcd1234abcd abcdef abcdefg
 abcdefghij admin adminadmin administrator adminpassword alexander alexandra amanda america
-andrew arsenal asd123asd123 asdfasdf asdfgh asdfghjkl asdfjkl ashley australia autumn azerty
-azertyuiop babyboy babygirl barcelona baseball basketball batman beautiful bestfriend
+andrew asd123asd123 asdfasdf asdfgh asdfghjkl asdfjkl ashley australia autumn azerty
+azertyuiop babyboy babygirl baseball basketball beautiful bestfriend
 bestfriends bismar blessed blueberry butterfly california callofduty canada celtic changeme
-changemenow changethis charlie cheesecake chelsea children chocolate christian christina
+changemenow changethis charlie cheesecake children chocolate christian christina
 christopher computer computers coordinator correcthorsebatterystaple counterstrike daniel
-december default defaultpassword dragon dragonball elizabeth england everything facebook family
+december default defaultpassword dragon dragonball elizabeth england everything family
 father february florida football forever fortnite freedom friday friendship germany godisgood
-godislove google grandma guest guestguest happybirthday hello hellohello hellokitty hellothere
+godislove grandma guest guestguest happybirthday hello hellohello hellokitty hellothere
 helloworld helloyou hockey iloveher ilovehim iloveme ilovemyself iloveu iloveyou
 iloveyouforever iloveyousomuch internet ireland january jennifer jessica jesuschrist
-jesusislord jesuslovesme jordan juventus leagueoflegends letmein letmeinnow liverpool lkjhgfdsa
+jesusislord jesuslovesme jordan juventus leagueoflegends letmein letmeinnow lkjhgfdsa
 london lovelove lovely loveyou manchester manunited manutd master matthew maytheforcebewithyou
-michael michelle microsoft minecraft mnbvcxz monday monkey mother myfamily mylove mypassword
-mysecret mysunshine newpassword newyork nicole nintendo nobody nosecret nothing november
+michael michelle minecraft mnbvcxz monday monkey mother myfamily mylove mypassword
+mysecret mysunshine newpassword newyork nicole nobody nosecret nothing november
 october oldpassword opensesame openthedoor ourpassword p@ssw0rd p@ssword pa55word pass passw0rd
-password passwordpassword passwort plastic plastics plasticshed playstation pleasechange
-pleaseletmein poiuytrewq pokemon princess q1w2e3r4t5 q1w2e3r4t5y6 qazwsx qazwsxedc qwaszx
+password passwordpassword passwort plastic plastics plasticshed pleasechange
+pleaseletmein poiuytrewq princess q1w2e3r4t5 q1w2e3r4t5y6 qazwsx qazwsxedc qwaszx
 qwe123qwe123 qweasd qweasdzxc qwer1234qwer qwerty qwertyqwerty qwertyuiop qwertz qwertzuiop
 rangers realmadrid recycle recycling robert root rootroot saltmarsh saltmarshplastics samantha
-samsung scotland secret secretpassword september soccer softball somebody something spiderman
-spring starwars stephanie strawberry summer sunday sunshine superadmin superman superuser
+scotland secret secretpassword september soccer softball somebody something spiderman
+spring stephanie strawberry summer sunday sunshine superadmin superuser
 sweetheart temppassword test tester testing testpassword testtest testuser texas thepassword
 thomas tobeornottobe together topsecret trustno trustnoone user username verysecret victoria
 volleyball volunteer volunteers warcraft welcome welcomeback welcomehome welcometo whatever
-windows winter word workshop worldofwarcraft wsxedcrfv yourpassword youtube zaq12wsxcde3
+winter word workshop wsxedcrfv yourpassword zaq12wsxcde3
 zaq1xsw2cde3 zxcvbn zxcvbnm
 `;
 

@@ -26,8 +26,9 @@ async function expectAccessible(page: Page): Promise<void> {
 }
 
 const grams = (sql: string): number => server.query<{ grams: number }>(sql)[0]?.grams ?? 0;
-/** As the pages write it, but for the thin space of thousands. */
-const kg = (value: number, places: number): string => (value / 1000).toFixed(places);
+/** As the pages write it, but for the thin space of thousands: halves go up, which toFixed does not promise. */
+const kg = (value: number, places: 2 | 3): string =>
+  places === 3 ? (value / 1000).toFixed(3) : (Math.floor((value + 5) / 10) / 100).toFixed(2);
 const plain = (text: string): string => text.replaceAll("\u2009", "");
 
 type Row = Record<string, string>;

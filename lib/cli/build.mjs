@@ -2,6 +2,7 @@
 import { createHash } from "node:crypto";
 import fs from "node:fs";
 import path from "node:path";
+import { buildWorkers } from "./build-workers.mjs";
 import { runToEnd } from "./own-processes.mjs";
 
 const FOLDERS = ["app", "components", "db", "lib", "public"];
@@ -67,7 +68,9 @@ export async function build(root, stdio = "inherit") {
   fs.rmSync(path.join(root, STAMP), { force: true });
   const env = { ...process.env, NODE_ENV: "production", NEXT_TELEMETRY_DISABLED: "1" };
   const code = await runToEnd(process.execPath, [NEXT_BIN, "build"], { cwd: root, env, stdio });
-  if (code === 0)
-    fs.writeFileSync(path.join(root, STAMP), `${JSON.stringify({ fingerprint: print })}\n`);
-  return code;
+  // Next empties its folder first.
+  if (code !== 0) return code;
+  await buildWorkers(root);
+  fs.writeFileSync(path.join(root, STAMP), `${JSON.stringify({ fingerprint: print })}\n`);
+  return 0;
 }

@@ -5,6 +5,7 @@
 import fs from "node:fs";
 import path from "node:path";
 import { NEXT_BIN, build, isBuilt } from "./build.mjs";
+import { buildWorkers } from "./build-workers.mjs";
 import { installIfNeeded } from "./install.mjs";
 import { endAll, endWithSignals, isStopping, runToEnd } from "./own-processes.mjs";
 
@@ -35,6 +36,7 @@ async function dev(args) {
   loadEnvironment("development");
   const migrated = await runEntry(ENTRIES.migrate, []);
   if (migrated !== 0) return migrated;
+  await buildWorkers(ROOT);
   const port = process.env.PORT ?? "3000";
   return runToEnd(process.execPath, [NEXT_BIN, "dev", "-p", port, ...args], { cwd: ROOT });
 }

@@ -1,10 +1,9 @@
 /**
- * Worker threads that run from the program's own source: long reads (exports, verify) belong there, with a
- * connection of their own, so that no request ever waits for them.
+ * Worker threads: long reads (exports, verify) belong there, with a connection of their own, so that no
+ * request ever waits for them. `lib/cli/build-workers.mjs` bundles them beforehand.
  */
 import "server-only";
 import path from "node:path";
-import { pathToFileURL } from "node:url";
 import { Worker } from "node:worker_threads";
 import { log } from "./logger";
 
@@ -12,19 +11,16 @@ import { log } from "./logger";
 const MOST_HEAP_MB = 1024;
 
 /**
- * Starts a worker from a TypeScript file. The thread resolves modules as the server does ("react-server"
- * makes the `server-only` guard pass).
+ * Starts a worker of lib/cli.
  *
- * @param file below lib/cli, such as "export-worker.ts"
+ * @param name of its source without the ending, such as "export-worker"
  * @param job what the worker finds in `workerData.job`; copied, so plain data only
  */
-export function startWorker(file: string, job: unknown): Worker {
-  // The bundler must not follow these paths: the worker is read from disk when it starts.
-  const folder = path.join(/*turbopackIgnore: true*/ process.cwd(), "lib", "cli");
-  const start = path.join(/*turbopackIgnore: true*/ folder, "worker-start.mjs");
-  return new Worker(/*turbopackIgnore: true*/ start, {
-    workerData: { source: pathToFileURL(path.join(folder, file)).href, job },
-    execArgv: ["--conditions=react-server"],
+export function startWorker(name: string, job: unknown): Worker {
+  // The bundler must not follow this path: the worker is read from disk when it starts.
+  const file = path.join(/*turbopackIgnore: true*/ process.cwd(), ".next/workers", `${name}.mjs`);
+  return new Worker(/*turbopackIgnore: true*/ file, {
+    workerData: { job },
     // A long read makes much short-lived garbage; collected often, it never adds up.
     resourceLimits: { maxYoungGenerationSizeMb: 4, maxOldGenerationSizeMb: MOST_HEAP_MB },
   });

@@ -5,6 +5,7 @@
 import fs from "node:fs";
 import os from "node:os";
 import path from "node:path";
+import { buildWorkers } from "../../lib/cli/build-workers.mjs";
 import { installIfNeeded } from "../../lib/cli/install.mjs";
 import { endWithSignals, runToEnd } from "../../lib/cli/own-processes.mjs";
 import { LOGS, ROOT, cleanEnvironment } from "../support/steps.mjs";
@@ -70,6 +71,7 @@ async function runBench(name, asked) {
 const started = Date.now();
 endWithSignals();
 await installIfNeeded(ROOT);
+await buildWorkers(ROOT);
 fs.mkdirSync(LOGS, { recursive: true });
 const known = fs
   .readdirSync(FOLDER)

@@ -213,8 +213,8 @@ function write(
     insertEntry(tx, content, entry.lines, prevHash, hash);
     prevHash = hash;
     for (const delta of totalsOf(entry.totals.kind, entry.totals.lines, entry.totals.sign, names)) {
-      addTotals(tx, "totals_day", "day", booked.day, delta);
-      addTotals(tx, "totals_month", "month", monthOf(booked.day), delta);
+      addTotals(tx, "day", booked.day, delta);
+      addTotals(tx, "month", monthOf(booked.day), delta);
     }
     for (const delta of scaleTotalsOf(
       entry.totals.kind,

@@ -1,6 +1,6 @@
 /** Writing what an act has decided: the entry's rows, and one write per changed balance, part and total. */
 import "server-only";
-import type { Month } from "@/lib/core/time";
+import type { Day, Month } from "@/lib/core/time";
 import { prepared, type Tx } from "@/lib/platform/database";
 import type { canonicalOf } from "../rules/seal";
 import type { Holding } from "../rules/holding";
@@ -93,20 +93,32 @@ export function insertEntry(
   );
 }
 
+/** Made once: every act of weighing uses both. */
+function addTotalsSql(table: "totals_day" | "totals_month", key: "day" | "month"): string {
+  const columns = TOTALS.map((column) => TOTALS_SQL[column]);
+  return `insert into ${table} (${key}, row_id, origin_no, ${columns.join(", ")})
+     values (?, ?, ?, ${columns.map(() => "?").join(", ")})
+     on conflict do update set ${columns.map((name) => `${name} = ${name} + excluded.${name}`).join(", ")}`;
+}
+
+const ADD_TOTALS = {
+  day: addTotalsSql("totals_day", "day"),
+  month: addTotalsSql("totals_month", "month"),
+};
+
+/** @param when the day or the month that the delta belongs to */
 export function addTotals(
   tx: Tx,
-  table: "totals_day" | "totals_month",
   key: "day" | "month",
-  when: string,
+  when: Day | Month,
   delta: TotalsDelta,
 ): void {
-  const columns = TOTALS.map((column) => TOTALS_SQL[column]);
-  prepared(
-    tx.client,
-    `insert into ${table} (${key}, row_id, origin_no, ${columns.join(", ")})
-     values (?, ?, ?, ${columns.map(() => "?").join(", ")})
-     on conflict do update set ${columns.map((name) => `${name} = ${name} + excluded.${name}`).join(", ")}`,
-  ).run(when, delta.rowId, delta.originNo, ...TOTALS.map((column) => delta.totals[column]));
+  prepared(tx.client, ADD_TOTALS[key]).run(
+    when,
+    delta.rowId,
+    delta.originNo,
+    ...TOTALS.map((column) => delta.totals[column]),
+  );
 }
 
 export function addScaleTotals(tx: Tx, month: Month, delta: ScaleDelta): void {

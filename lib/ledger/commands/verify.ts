@@ -20,7 +20,7 @@ export type VerifyJob = { databaseFile: string; expected: ExpectedHead | null };
 
 function inWorker(job: VerifyJob): Promise<VerifyResult> {
   return new Promise((resolve, reject) => {
-    const worker = startWorker("verify-worker.ts", job);
+    const worker = startWorker("verify-worker", job);
     worker.once("message", (result: VerifyResult) => {
       resolve(result);
       void worker.terminate();

@@ -15,7 +15,7 @@ export type ExportJob = { databaseFile: string; period: Period } & (
 );
 
 function run(job: ExportJob): ReadableStream<Uint8Array> {
-  return streamFromWorker(startWorker("export-worker.ts", job), `export-${job.what}`);
+  return streamFromWorker(startWorker("export-worker", job), `export-${job.what}`);
 }
 
 /** The mass balance as UTF-8 CSV. */

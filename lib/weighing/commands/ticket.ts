@@ -77,7 +77,7 @@ export function postTicket(
     scaleNumber: scale.number,
     mpeMilligrams: mpeOf(scale, ticket.readings),
   };
-  assignPointIn(tx, bag.id, ticket.pointId);
+  if (bag.pointId === null) assignPointIn(tx, bag.id, ticket.pointId);
   moveBagIn(tx, bag.id, "weighed", ctx.now);
   const holderId = ensureHolder(tx, "bag", bag.code);
   const drafts: Draft[] = [

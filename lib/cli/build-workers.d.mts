@@ -1,0 +1,1 @@
+export function buildWorkers(root: string): Promise<void>;

@@ -22,7 +22,7 @@ export function startWorker(name: string, job: unknown): Worker {
   return new Worker(/*turbopackIgnore: true*/ file, {
     workerData: { job },
     // A long read makes much short-lived garbage; collected often, it never adds up.
-    resourceLimits: { maxYoungGenerationSizeMb: 4, maxOldGenerationSizeMb: MOST_HEAP_MB },
+    resourceLimits: { maxYoungGenerationSizeMb: 8, maxOldGenerationSizeMb: MOST_HEAP_MB },
   });
 }
 

@@ -13,7 +13,7 @@ import {
   problemValues,
   specOf,
   type ScaleSpec,
-} from "@/lib/scales/rules";
+} from "@/lib/scales/rules/scale";
 
 type Values = z.input<typeof scaleDataSchema>;
 

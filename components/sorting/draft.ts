@@ -2,7 +2,7 @@
 import { newId } from "@/lib/core/ids";
 import type { Form, Kind, WashState } from "@/lib/core/plastics";
 import type { CloseSortingInput, PILE_POLYMERS } from "@/lib/sorting/contract";
-import { netGramsOf, type Reading } from "@/lib/weighing/rules";
+import { netGramsOf, type Reading } from "@/lib/scales/rules/reading";
 import { emptyReading, type ReadingValue } from "../weighing/form-values";
 import { readReading, type ListedTare } from "../weighing/read-form";
 

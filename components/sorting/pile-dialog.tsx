@@ -20,6 +20,7 @@ import {
   type WashState,
 } from "@/lib/core/plastics";
 import { PATTERNS } from "../stock/patterns";
+import { ColourFromPhoto } from "../uploads/colour-from-photo";
 import type { ListedTare } from "../weighing/read-form";
 import type { DeskColour, DeskScale } from "../weighing/use-desk-lists";
 import { netOf, type PileDraft, type PilePolymer } from "./draft";
@@ -116,6 +117,11 @@ export function PileDialog({
             <strong>Never heated.</strong> It gets its own lot and no run can take it.
           </p>
         ) : null}
+        <ColourFromPhoto
+          palette={colours}
+          value={pile.colourCode}
+          onChoose={(colourCode) => setPile({ ...pile, colourCode })}
+        />
         <ChoiceTiles
           legend="Colour"
           name="colour"

@@ -15,7 +15,7 @@ import type { LossCause } from "@/lib/ledger/terms";
 import type { BagToSort, closeSortingEndpoint, RejectReason } from "@/lib/sorting/contract";
 import { judgeSum, loadsOf, toleranceOf } from "@/lib/sorting/rules";
 import { CLOSE_SORTING_ADDRESS } from "@/lib/sorting/terms";
-import { netGramsOf } from "@/lib/weighing/rules";
+import { netGramsOf } from "@/lib/scales/rules/reading";
 import { rememberedScale, rememberScale } from "../weighing/remembered-scale";
 import type { DeskLists } from "../weighing/use-desk-lists";
 import {

@@ -3,13 +3,13 @@ import { readScan } from "@/lib/core/bag-code";
 import { readMass } from "@/lib/core/mass";
 import { captureSentence, massSentence } from "@/lib/core/capture-messages";
 import {
-  missingOfMaterial,
   netGramsOf,
   refuseReading,
   refuseReadings,
   type NamedScale,
   type Reading,
-} from "@/lib/weighing/rules";
+} from "@/lib/scales/rules/reading";
+import { missingOfMaterial } from "@/lib/weighing/rules";
 import type { Question } from "@/lib/weighing/terms";
 import { TYPED, type FormValues, type ReadingValue, type TareValue } from "./form-values";
 import type { WeighInEndpointInput } from "./weigh-in-body";

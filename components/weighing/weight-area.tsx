@@ -2,7 +2,7 @@
 
 import { WeightField } from "@/components/forms/weight-field";
 import { formatKg, gramsFromMilligrams } from "@/lib/core/mass";
-import { tareMilligrams } from "@/lib/weighing/rules";
+import { tareMilligrams } from "@/lib/scales/rules/reading";
 import type { ReadingValue } from "./form-values";
 import { readReading, type ListedTare } from "./read-form";
 

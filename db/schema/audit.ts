@@ -35,3 +35,26 @@ export const auditValues = sqliteTable(
   },
   (t) => [primaryKey({ columns: [t.eventId, t.field] })],
 );
+
+/** A record that was taken back, why, and what stands in its place. */
+export const corrections = sqliteTable(
+  "corrections",
+  {
+    /** The request's id. */
+    id: idColumn<"correction">("id").primaryKey(),
+    subjectKind: text("subject_kind").notNull(),
+    subjectId: text("subject_id").notNull(),
+    /** null: nothing stands in its place. */
+    replacementId: text("replacement_id"),
+    /** Free text; null once erased. The ledger holds only its salted hash. */
+    reason: text("reason"),
+    doneBy: idColumn<"person">("done_by").notNull(),
+    at: instantColumn("at").notNull(),
+    actId: integer("act_id").notNull(),
+  },
+  (t) => [
+    wholeNumbers("corrections_whole_numbers", t.at, t.actId),
+    index("corrections_subject").on(t.subjectKind, t.subjectId),
+    index("corrections_act").on(t.actId),
+  ],
+);

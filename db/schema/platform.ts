@@ -22,6 +22,23 @@ export const scheme = sqliteTable(
   ],
 );
 
+/** What a coordinator sets for the whole scheme. One row. */
+export const schemeLimits = sqliteTable(
+  "scheme_limits",
+  {
+    id: integer("id").primaryKey(),
+    /** A lot closes when it has been open so long; null: never by age. */
+    lotWeeks: integer("lot_weeks"),
+    /** Fire and permit limits of what may lie in the shed; null: none set. */
+    storageGrams: integer("storage_grams"),
+    storageDays: integer("storage_days"),
+  },
+  (t) => [
+    check("scheme_limits_one_row", sql`${t.id} = 1`),
+    wholeNumbers("scheme_limits_whole_numbers", t.lotWeeks, t.storageGrams, t.storageDays),
+  ],
+);
+
 export const sites = sqliteTable("sites", {
   id: integer("id").primaryKey(),
   name: text("name").notNull().unique(),

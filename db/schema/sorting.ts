@@ -10,7 +10,7 @@ import {
   uniqueIndex,
 } from "drizzle-orm/sqlite-core";
 import { LOSS_CAUSES } from "@/lib/ledger/terms";
-import { SORTING_STATES } from "@/lib/sorting/terms";
+import { DRAFT_STATES, SORTING_STATES } from "@/lib/sorting/terms";
 import {
   gramsColumn,
   idColumn,
@@ -56,6 +56,8 @@ export const sortingSessions = sqliteTable(
     cause: text("cause", { enum: LOSS_CAUSES }),
     actId: integer("act_id").notNull(),
     undoneActId: integer("undone_act_id"),
+    /** The session in whose place it stands. */
+    corrects: idColumn<"sorting">("corrects"),
   },
   (t) => [
     oneOf("sorting_sessions_state", t.state, SORTING_STATES),
@@ -90,6 +92,75 @@ export const sortingBags = sqliteTable(
     uniqueIndex("sorting_bags_one_live")
       .on(t.bagId)
       .where(sql`${t.live} = 1`),
+  ],
+);
+
+/**
+ * A session under way: what was typed so far, kept on the server so that it can be put aside and taken up on
+ * another phone. Nothing of it is in the ledger; saving makes a row of sorting_sessions with the same id.
+ */
+export const sortingDrafts = sqliteTable(
+  "sorting_drafts",
+  {
+    id: idColumn<"sorting">("id").primaryKey(),
+    state: text("state", { enum: DRAFT_STATES }).notNull(),
+    startedBy: idColumn<"person">("started_by")
+      .notNull()
+      .references(() => people.id),
+    startedAt: instantColumn("started_at").notNull(),
+    changedBy: idColumn<"person">("changed_by")
+      .notNull()
+      .references(() => people.id),
+    changedAt: instantColumn("changed_at").notNull(),
+    /** Goes up with every change: who sends an older one is told what the other typed. */
+    version: integer("version").notNull(),
+    /** JSON of scale, piles, rejects and answers as they were typed. */
+    content: text("content").notNull(),
+  },
+  (t) => [
+    oneOf("sorting_drafts_state", t.state, DRAFT_STATES),
+    wholeNumbers("sorting_drafts_whole_numbers", t.startedAt, t.changedAt, t.version),
+    index("sorting_drafts_open")
+      .on(t.changedAt)
+      .where(sql`${t.state} = 'open'`),
+  ],
+);
+
+export const sortingDraftBags = sqliteTable(
+  "sorting_draft_bags",
+  {
+    draftId: idColumn<"sorting">("draft_id")
+      .notNull()
+      .references(() => sortingDrafts.id),
+    bagId: idColumn<"bag">("bag_id")
+      .notNull()
+      .references(() => bags.id),
+    /** False once the draft was saved, given up, or the bag was taken off the table. */
+    live: integer("live", { mode: "boolean" }).notNull(),
+  },
+  (t) => [
+    primaryKey({ columns: [t.draftId, t.bagId] }),
+    uniqueIndex("sorting_draft_bags_one_live")
+      .on(t.bagId)
+      .where(sql`${t.live} = 1`),
+  ],
+);
+
+/** Who has a draft open at this moment: two people who sort the same bags see each other's name. */
+export const sortingPresence = sqliteTable(
+  "sorting_presence",
+  {
+    draftId: idColumn<"sorting">("draft_id")
+      .notNull()
+      .references(() => sortingDrafts.id),
+    personId: idColumn<"person">("person_id")
+      .notNull()
+      .references(() => people.id),
+    seenAt: instantColumn("seen_at").notNull(),
+  },
+  (t) => [
+    primaryKey({ columns: [t.draftId, t.personId] }),
+    wholeNumbers("sorting_presence_whole_numbers", t.seenAt),
   ],
 );
 

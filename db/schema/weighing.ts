@@ -60,12 +60,20 @@ export const weighIns = sqliteTable(
     lotId: idColumn<"lot">("lot_id"),
     actId: integer("act_id"),
     undoneActId: integer("undone_act_id"),
+    /** The weigh-in in whose place it stands. */
+    corrects: idColumn<"weigh-in">("corrects"),
+    /** Who accepted or discarded a second reading. */
+    reviewedBy: idColumn<"person">("reviewed_by").references(() => people.id),
+    reviewedAt: instantColumn("reviewed_at"),
   },
   (t) => [
     oneOf("weigh_ins_state", t.state, WEIGH_IN_STATES),
     oneOf("weigh_ins_condition", t.condition, CONDITIONS),
     check("weigh_ins_net", sql`${t.netGrams} > 0`),
-    check("weigh_ins_act", sql`(${t.state} in ('posted', 'undone')) = (${t.actId} is not null)`),
+    check(
+      "weigh_ins_act",
+      sql`(${t.state} in ('posted', 'undone', 'corrected')) = (${t.actId} is not null)`,
+    ),
     wholeNumbers(
       "weigh_ins_whole_numbers",
       t.netGrams,
@@ -74,6 +82,7 @@ export const weighIns = sqliteTable(
       t.recordedAt,
       t.actId,
       t.undoneActId,
+      t.reviewedAt,
     ),
     uniqueIndex("weigh_ins_one_per_bag")
       .on(t.bagId)

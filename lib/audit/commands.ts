@@ -52,3 +52,33 @@ export function eraseAuditValuesIn(tx: Tx, subjectKind: string, subjectId: strin
      where event_id in (select id from audit_events where subject_kind = ? and subject_id = ?)`,
   ).run(subjectKind, subjectId);
 }
+
+export type CorrectionRecord = {
+  /** The request's id. */
+  id: string;
+  subjectKind: string;
+  subjectId: string;
+  /** null: nothing stands in its place. */
+  replacementId: string | null;
+  reason: string;
+  doneBy: string;
+  actId: number;
+};
+
+/** Keeps why a record was taken back and what stands in its place. The ledger has only the reason's salted hash. */
+export function insertCorrectionIn(tx: Tx, ctx: Context, record: CorrectionRecord): void {
+  prepared(
+    tx.client,
+    `insert into corrections (id, subject_kind, subject_id, replacement_id, reason, done_by, at, act_id)
+     values (?, ?, ?, ?, ?, ?, ?, ?)`,
+  ).run(
+    record.id,
+    record.subjectKind,
+    record.subjectId,
+    record.replacementId,
+    record.reason,
+    record.doneBy,
+    ctx.now,
+    record.actId,
+  );
+}

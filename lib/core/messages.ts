@@ -4,9 +4,11 @@
  */
 import { CAPTURE_SENTENCES, text, type Sentence } from "./capture-messages";
 import type { ErrorCode, ErrorDetail } from "./errors";
+import { PHOTO_SENTENCES } from "./photo-messages";
 
 const SENTENCES: Record<ErrorCode, Sentence> = {
   ...CAPTURE_SENTENCES,
+  ...PHOTO_SENTENCES,
   "signed-out": () => "You are not signed in. What you typed is kept; sign in and send it again.",
   "wrong-sign-in": () => "That address and password do not fit together. Check both and try again.",
   "sign-in-slowed": (v) =>
@@ -71,6 +73,8 @@ const SENTENCES: Record<ErrorCode, Sentence> = {
   "undo-used-since": () =>
     "Something was taken from it since, so it cannot be undone. Nothing was changed; it can be corrected instead.",
   "undone-already": () => "This was undone already. Nothing was changed.",
+  "corrected-already": () =>
+    "This was corrected already. Nothing was changed; correct the record that stands in its place.",
   "piles-empty": () => "There is no pile and no reject yet. Nothing was saved; weigh at least one.",
   "sum-beyond-tolerance": (v) =>
     `The piles add up to ${text(v.sumKg)} kg of ${text(v.netKg)} kg; ${text(v.differenceKg)} kg is more than the scale can explain (${text(v.toleranceKg)} kg). Nothing was saved; weigh the piles again, or say where it went.`,

@@ -1,6 +1,7 @@
 /**
  * The same request twice gives the same answer and one effect. Receipts are kept for good and looked up
- * inside the write transaction; refusals are not stored, because a throw rolls back.
+ * inside the write transaction; refusals are not stored, because a throw rolls back, nor are questions, so that
+ * the same record can be sent again with its answer.
  */
 import "server-only";
 import { AppError } from "@/lib/core/errors";
@@ -14,6 +15,7 @@ type Stored = { sender: string; endpoint: string; bodyHash: string; answer: stri
  *
  * @param endpoint "POST /api/weigh-ins"
  * @param requestId UUIDv7 made by the client
+ * @param keeps false for an answer that wrote nothing and asks something back
  * @throws AppError `request-id-reused` for the same id with another body, sender or endpoint
  */
 export function once<Answer>(
@@ -21,6 +23,7 @@ export function once<Answer>(
   endpoint: string,
   requestId: string,
   work: (tx: Tx) => Answer extends PromiseLike<unknown> ? never : Answer,
+  keeps: (answer: Answer) => boolean = () => true,
 ): Answer {
   return inTransaction<Answer>(ctx, (tx) => {
     const stored = prepared(
@@ -39,6 +42,7 @@ export function once<Answer>(
       return JSON.parse(stored.answer) as Answer extends PromiseLike<unknown> ? never : Answer;
     }
     const answer = work(tx);
+    if (!keeps(answer)) return answer;
     prepared(
       tx.client,
       "insert into receipts (request_id, sender, endpoint, body_hash, answer, at) values (?, ?, ?, ?, ?, ?)",

@@ -5,10 +5,8 @@
  */
 import type { Instant } from "@/lib/core/time";
 import type { LossCause } from "@/lib/ledger/terms";
-import { combinedTolerance, mpeInService, type ScaleSpec } from "@/lib/scales/rules";
-import { mayStillUndo, type Reading } from "@/lib/weighing/rules";
-import { UNDO_MS } from "@/lib/weighing/terms";
-import type { SortingState } from "./terms";
+import type { Reading } from "@/lib/scales/rules/reading";
+import { combinedTolerance, mpeInService, type ScaleSpec } from "@/lib/scales/rules/scale";
 
 /** A load and the scale on which it was read. */
 export type Load = { loadMilligrams: number; scale: ScaleSpec };
@@ -75,24 +73,6 @@ export function judgeSum(
       : { kind: "needs-cause", differenceGrams };
   }
   return { kind: answer.confirmedAbove ? "surplus" : "needs-check", differenceGrams };
-}
-
-/** Until when whoever saved a sorting may take it back. */
-export function undoUntil(recordedAt: number): number {
-  return recordedAt + UNDO_MS;
-}
-
-export type UndoVerdict = "fine" | "undone-already" | "undo-not-yours" | "undo-too-late";
-
-/** May this person take it back now? */
-export function judgeUndo(
-  sorting: { state: SortingState; doneBy: string; recordedAt: Instant },
-  person: string,
-  now: Instant,
-): UndoVerdict {
-  if (sorting.state === "undone") return "undone-already";
-  if (sorting.doneBy !== person) return "undo-not-yours";
-  return mayStillUndo(sorting.recordedAt, now) ? "fine" : "undo-too-late";
 }
 
 /**

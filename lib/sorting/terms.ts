@@ -1,5 +1,9 @@
-export const SORTING_STATES = ["closed", "undone"] as const;
+/** closed: in the ledger. corrected: taken back, another session stands for it or nothing does. */
+export const SORTING_STATES = ["closed", "undone", "corrected"] as const;
 export type SortingState = (typeof SORTING_STATES)[number];
+
+/** open: on a table, or put aside. saved: it became a session. given-up: its bags wait again. */
+export const DRAFT_STATES = ["open", "saved", "given-up"] as const;
 
 /** The ledger's holder of what was turned away, at the one site there is. */
 export const REJECT_BIN_CODE = "REJECT-BIN-1";

@@ -24,3 +24,31 @@ export const FIRST_PALETTE: readonly {
   { code: "pink", name: "Pink", hex: "#e8a2b8", look: "solid" },
   { code: "mixed", name: "Mixed", hex: "#b9b3a3", look: "mixed" },
 ];
+
+/** posted: in the ledger. undone: taken back by who saved it. corrected: taken back, perhaps with another in its place. */
+export const RECORD_STATES = ["posted", "undone", "corrected"] as const;
+export type RecordState = (typeof RECORD_STATES)[number];
+
+/** Why a lot takes no more: its container is full or empty, a step began, it grew old, it was merged, somebody said so. */
+export const LOT_ENDS = ["full", "empty", "step", "age", "merged", "by-hand"] as const;
+export type LotEnd = (typeof LOT_ENDS)[number];
+
+/**
+ * count: the container was weighed. empty: the bin is empty. on-the-spot: more was wanted than the book held.
+ * opening: what stood there on the scheme's first day.
+ */
+export const COUNT_KINDS = ["count", "empty", "on-the-spot", "opening"] as const;
+export type CountKind = (typeof COUNT_KINDS)[number];
+
+export const MOVE_KINDS = ["merge", "split", "identify"] as const;
+export type MoveKind = (typeof MOVE_KINDS)[number];
+
+/** How "Not sure" was found out: the code on the item, floats or sinks, how it bends, asked somebody who knows. */
+export const IDENTIFY_METHODS = ["code", "float", "flexibility", "asked"] as const;
+export type IdentifyMethod = (typeof IDENTIFY_METHODS)[number];
+
+export const STEP_KINDS = ["washing", "drying", "shredding"] as const;
+export type StepKind = (typeof STEP_KINDS)[number];
+
+/** Taken out and weighed, or weighed back: the container before less after. */
+export const TAKING = ["taken", "weighed-back"] as const;

@@ -4,14 +4,16 @@ import { getBagByCode, getLabel } from "@/lib/bags/queries";
 import { formatCode, type LabelCode } from "@/lib/core/bag-code";
 import { AppError } from "@/lib/core/errors";
 import type { BagId, Id, PersonId, PointId, WeighInId } from "@/lib/core/ids";
+import type { PolymerAnswer } from "@/lib/core/plastics";
 import type { Instant } from "@/lib/core/time";
+import { mayStillUndo, undoUntil } from "@/lib/core/undo";
 import { allow, requirePerson, type Context } from "@/lib/platform/context";
 import { inSnapshot, prepared, type Readable } from "@/lib/platform/database";
 import { requireScheme } from "@/lib/platform/scheme";
-import { getContainer } from "@/lib/scales/queries";
+import { getContainer } from "@/lib/scales/queries/scales";
 import type { Scanned, Ticket, Today, TodayInput } from "./contract";
-import { mayStillUndo, startOfDay } from "./rules";
-import { UNDO_MS, type WeighInState } from "./terms";
+import { startOfDay } from "./rules";
+import type { Condition, WeighInState } from "./terms";
 
 export type WeighIn = {
   id: WeighInId;
@@ -63,6 +65,32 @@ export function helperName(db: Readable, id: string): string {
   const name = prepared(db.client, "select name from people where id = ?").pluck().get(id) as
     string | undefined;
   return name ? name : "somebody who has left";
+}
+
+export type BagWeighIn = {
+  id: WeighInId;
+  state: WeighInState;
+  netGrams: number;
+  occurredAt: Instant;
+  condition: Condition;
+  polymer: PolymerAnswer;
+  colourName: string | null;
+  lotNumber: number | null;
+  byName: string;
+};
+
+/** Every weighing of a bag, also second readings and undone ones, oldest first. */
+export function listWeighInsOfBag(ctx: Context, bagId: BagId): BagWeighIn[] {
+  allow(ctx, "bags.read");
+  const db = ctx.db.reader;
+  const rows = prepared(
+    db.client,
+    `select w.id, w.state, w.net_grams as netGrams, w.occurred_at as occurredAt, w.condition, w.polymer,
+       c.name as colourName, l.number as lotNumber, w.done_by as byName
+      from weigh_ins w left join colours c on c.code = w.colour_code left join lots l on l.id = w.lot_id
+      where w.bag_id = ? order by w.recorded_at, w.id`,
+  ).all(bagId) as BagWeighIn[];
+  return rows.map((row) => ({ ...row, byName: helperName(db, row.byName) }));
 }
 
 /** What a scanned or typed code stands for. @throws AppError `unknown-code` */
@@ -144,7 +172,7 @@ export function getToday(ctx: Context, input: TodayInput): Today {
           oneKind: row.oneKind === 1,
           belowMinimum: row.belowMinimum === 1,
           mine,
-          undoUntil: open ? row.recordedAt + UNDO_MS : null,
+          undoUntil: open ? undoUntil(row.recordedAt) : null,
         };
       }),
     };

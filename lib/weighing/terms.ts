@@ -6,12 +6,15 @@ export const CONDITION_NAMES: Record<Condition, string> = {
   wet: "Wet",
 };
 
-/** posted: in the ledger. for-review: a second reading of a bag, kept outside it. */
-export const WEIGH_IN_STATES = ["posted", "for-review", "undone", "discarded"] as const;
+/** posted: in the ledger. for-review: a second reading of a bag, kept outside it. corrected: another stands for it. */
+export const WEIGH_IN_STATES = [
+  "posted",
+  "for-review",
+  "undone",
+  "discarded",
+  "corrected",
+] as const;
 export type WeighInState = (typeof WEIGH_IN_STATES)[number];
-
-/** Undo runs this long from recordedAt. */
-export const UNDO_MS = 10 * 60 * 1000;
 
 /** Readings that one bag can be weighed in. */
 export const MOST_READINGS = 20;

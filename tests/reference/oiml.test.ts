@@ -13,7 +13,7 @@ import {
   minimumCapacity,
   mpeInService,
   type ScaleSpec,
-} from "@/lib/scales/rules";
+} from "@/lib/scales/rules/scale";
 
 function table<Row>(name: string): Row[] {
   const text = fs.readFileSync(`fixtures/reference/${name}.csv`, "utf8");

@@ -63,6 +63,11 @@ export function newShed(): Shed {
         "insert into containers (id, kind, name, tare_mg, created_at) values (?, 'container', 'Grey crate', 150000, ?)",
       )
       .run(crateId, NOON);
+    tx.client
+      .prepare(
+        "insert into container_tares (container_id, valid_from, tare_mg) values (?, ?, 150000)",
+      )
+      .run(crateId, NOON);
   });
   const weigh: Shed["weigh"] = (netGrams, { at = NOON, point = 0 } = {}) =>
     inTransaction(scheme, (tx) => {

@@ -3,7 +3,7 @@ import { ContainersSection } from "@/components/scales/containers-section";
 import { ScalesSection } from "@/components/scales/scales-section";
 import { PageHeader } from "@/components/ui/page-header";
 import { pageContext } from "@/lib/http/page-context";
-import { listManagedContainers, listManagedScales } from "@/lib/scales/queries";
+import { listManagedContainers, listManagedScales } from "@/lib/scales/queries/scales";
 
 export const metadata: Metadata = { title: "Scales" };
 

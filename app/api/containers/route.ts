@@ -1,7 +1,7 @@
 import { route } from "@/lib/http/route";
 import { addContainer } from "@/lib/scales/commands/containers";
 import { addContainerEndpoint, listContainersEndpoint } from "@/lib/scales/contract";
-import { listContainers } from "@/lib/scales/queries";
+import { listContainers } from "@/lib/scales/queries/scales";
 
 export const GET = route(listContainersEndpoint, listContainers);
 export const POST = route(addContainerEndpoint, addContainer);

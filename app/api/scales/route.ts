@@ -1,7 +1,7 @@
 import { route } from "@/lib/http/route";
 import { addScale } from "@/lib/scales/commands/scales";
 import { addScaleEndpoint, listScalesEndpoint } from "@/lib/scales/contract";
-import { listScales } from "@/lib/scales/queries";
+import { listScales } from "@/lib/scales/queries/scales";
 
 export const GET = route(listScalesEndpoint, listScales);
 export const POST = route(addScaleEndpoint, addScale);

@@ -7,7 +7,7 @@ import { AppError } from "@/lib/core/errors";
 import type { Id } from "@/lib/core/ids";
 import { sameName, tidyName } from "@/lib/core/names";
 import type { Instant } from "@/lib/core/time";
-import { allow, type Context } from "@/lib/platform/context";
+import { actorId, allow, type Context } from "@/lib/platform/context";
 import { prepared, type Tx } from "@/lib/platform/database";
 import { once } from "@/lib/platform/receipts";
 import type {
@@ -16,7 +16,7 @@ import type {
   ContainerReceipt,
   retireContainerSchema,
 } from "../contract";
-import { getContainer, type Container } from "../queries";
+import { getContainer, type Container } from "../queries/scales";
 
 type ContainerId = Id<"container">;
 
@@ -41,6 +41,7 @@ export function addContainer(
       `insert into containers (id, kind, name, tare_mg, label_code, created_at, retired_at)
        values (?, ?, ?, ?, ?, ?, null)`,
     ).run(id, kind, name, tareMilligrams, labelCode, ctx.now);
+    keepTare(tx, ctx, id, tareMilligrams);
     recordAudit(tx, ctx, {
       action: "containers.add",
       subjectKind: "container",
@@ -53,7 +54,8 @@ export function addContainer(
 }
 
 /**
- * Changes name or empty weight. Weigh-ins already saved keep the tare that they were saved with.
+ * Changes name or empty weight. Weigh-ins already saved keep the tare that they were saved with, and a ticket
+ * that still waits is read with the tare of its own time.
  *
  * @throws AppError `not-found`, `name-in-use`
  */
@@ -72,6 +74,7 @@ export function changeContainer(
       tareMilligrams,
       before.id,
     );
+    if (tareMilligrams !== before.tareMilligrams) keepTare(tx, ctx, before.id, tareMilligrams);
     recordAudit(tx, ctx, {
       action: "containers.change",
       subjectKind: "container",
@@ -128,6 +131,15 @@ function setRetiredIn(
   );
   recordAudit(tx, ctx, { action, subjectKind: "container", subjectId: containerId, fields: {} });
   return { ...container, retiredAt };
+}
+
+/** Twice in one millisecond: the later word counts. */
+function keepTare(tx: Tx, ctx: Context, containerId: ContainerId, tareMilligrams: number): void {
+  prepared(
+    tx.client,
+    `insert into container_tares (container_id, valid_from, tare_mg, set_by) values (?, ?, ?, ?)
+     on conflict do update set tare_mg = excluded.tare_mg, set_by = excluded.set_by`,
+  ).run(containerId, ctx.now, tareMilligrams, actorId(ctx) || null);
 }
 
 function requireContainer(tx: Tx, containerId: ContainerId): Container {

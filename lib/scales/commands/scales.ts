@@ -16,8 +16,8 @@ import type {
   ScaleData,
   ScaleReceipt,
 } from "../contract";
-import { getScale, type Scale } from "../queries";
-import { checkScale, problemValues, specOf, type ScaleSpec } from "../rules";
+import { getScale, type Scale } from "../queries/scales";
+import { checkScale, problemValues, specOf, type ScaleSpec } from "../rules/scale";
 
 /** One site until there are more; `sites` has one row. */
 const SITE = 1;

@@ -7,6 +7,7 @@ import { formatCode } from "@/lib/core/bag-code";
 import { AppError } from "@/lib/core/errors";
 import type { SortingId } from "@/lib/core/ids";
 import { formatKg } from "@/lib/core/mass";
+import { undoUntil } from "@/lib/core/undo";
 import { ensureHolder } from "@/lib/ledger/commands/define";
 import { postAct, type Draft } from "@/lib/ledger/commands/post";
 import { heldBy } from "@/lib/ledger/queries/entries";
@@ -14,16 +15,14 @@ import { REJECT, UNSORTED, type Basis } from "@/lib/ledger/terms";
 import { allow, requirePerson, type Context } from "@/lib/platform/context";
 import { prepared, type Tx } from "@/lib/platform/database";
 import { once } from "@/lib/platform/receipts";
-import { getScale, type Scale } from "@/lib/scales/queries";
+import { basisOf, requireScale } from "@/lib/scales/queries/instruments";
+import type { Scale } from "@/lib/scales/queries/scales";
 import { lotForMaterialIn, type OpenLot } from "@/lib/stock/commands/lots";
 import type { CloseSortingInput, SortingReceipt } from "../contract";
 import { getWeighedBag, listLoads, type WeighedBag } from "../queries/table";
-import { judgeSum, sortedAt, toleranceOf, undoUntil, type SumVerdict } from "../rules";
+import { judgeSum, sortedAt, toleranceOf, type SumVerdict } from "../rules";
 import { CLOSE_SORTING_ADDRESS, REJECT_BIN_CODE } from "../terms";
 import { readFractions, type Fraction } from "./fractions";
-
-/** Until scales are checked against a weight each day, no reading counts as confirmed. */
-const BASIS: Basis = "unchecked";
 
 type Target = OpenLot & { materialId: number; grams: number; mpeMilligrams: number };
 
@@ -44,8 +43,7 @@ export function closeSorting(ctx: Context, input: CloseSortingInput): SortingRec
     input.requestId,
     (tx) => {
       const { bag, weighed } = requireWeighed(tx, input);
-      const scale = getScale(tx, input.scaleId);
-      if (!scale || scale.retiredAt !== null) throw new AppError("unknown-scale", {}, ["scaleId"]);
+      const scale = requireScale(tx, input.scaleId, input.occurredAt);
       const fractions = readFractions(tx, input, scale);
       if (fractions.length === 0) throw new AppError("piles-empty");
 
@@ -64,12 +62,13 @@ export function closeSorting(ctx: Context, input: CloseSortingInput): SortingRec
       const sortingId = input.requestId as SortingId;
       const occurredAt = sortedAt(input.occurredAt, weighed.occurredAt, ctx.now);
       const targets = findTargets(tx, ctx, fractions);
+      const read = { basis: basisOf(tx, scale.id, occurredAt), scaleNumber: scale.number };
       const { actId } = postAct(tx, { now: ctx.now, doneBy, sentBy: doneBy, device: null }, [
         {
           kind: "sort",
           occurredAt,
           subject: `sorting:${sortingId}`,
-          lines: linesOf(tx, weighed, netGrams, targets, fractions, scale, verdict),
+          lines: linesOf(tx, weighed, netGrams, targets, fractions, read, verdict),
         },
       ]);
       const cause = verdict.kind === "loss" ? verdict.cause : null;
@@ -192,10 +191,9 @@ function linesOf(
   netGrams: number,
   targets: readonly Target[],
   fractions: readonly Fraction[],
-  scale: Scale,
+  read: { basis: Basis; scaleNumber: number },
   verdict: Explained,
 ): Draft["lines"] {
-  const read = { basis: BASIS, scaleNumber: scale.number };
   const rejects = fractions.filter((fraction) => fraction.rejectReason !== null);
   const lines: Draft["lines"][number][] = [
     { account: "bag", holderId: weighed.holderId, materialId: UNSORTED, grams: -netGrams },

@@ -1,18 +1,14 @@
 /** Reading what a sorting sends: every pile and reject with its scale, tare, material or reason. */
 import "server-only";
 import { AppError } from "@/lib/core/errors";
+import type { ReadingInput } from "@/lib/core/schemas";
+import type { Instant } from "@/lib/core/time";
 import { REJECT } from "@/lib/ledger/terms";
 import { ensureMaterial } from "@/lib/ledger/commands/define";
 import { prepared, type Tx } from "@/lib/platform/database";
-import { getContainer, type Scale } from "@/lib/scales/queries";
-import type { ReadingInput } from "@/lib/core/schemas";
-import {
-  mpeOf,
-  netGramsOf,
-  refuseReadings,
-  tareMilligrams,
-  type Reading,
-} from "@/lib/weighing/rules";
+import { withListedTares } from "@/lib/scales/queries/instruments";
+import type { Scale } from "@/lib/scales/queries/scales";
+import { mpeOf, netGramsOf, refuseReadings, tareMilligrams } from "@/lib/scales/rules/reading";
 import type { CloseSortingInput } from "../contract";
 import { loadsOf, type Load } from "../rules";
 
@@ -40,7 +36,7 @@ export function readFractions(tx: Tx, input: CloseSortingInput, scale: Scale): F
       requireListed(tx, "colours", pile.colourCode, "unknown-colour", [...path, "colourCode"]);
       const { reading, ...material } = pile;
       return {
-        ...weigh(tx, reading, scale, [...path, "reading"]),
+        ...weigh(tx, reading, scale, input.occurredAt, [...path, "reading"]),
         materialId: ensureMaterial(tx, material),
         rejectReason: null,
       };
@@ -49,7 +45,7 @@ export function readFractions(tx: Tx, input: CloseSortingInput, scale: Scale): F
       const path = ["rejects", at] as const;
       requireListed(tx, "reject_reasons", reject.reason, "unknown-reason", [...path, "reason"]);
       return {
-        ...weigh(tx, reject.reading, scale, [...path, "reading"]),
+        ...weigh(tx, reject.reading, scale, input.occurredAt, [...path, "reading"]),
         materialId: REJECT,
         rejectReason: reject.reason,
       };
@@ -76,17 +72,10 @@ function weigh(
   tx: Tx,
   sent: ReadingInput,
   scale: Scale,
+  occurredAt: Instant,
   path: Path,
 ): Omit<Fraction, "materialId" | "rejectReason"> {
-  // The list's weight counts, whatever the client believed it to be; a typed tare is taken as it is.
-  const reading: Reading = {
-    ...sent,
-    containerTareMilligrams: tareOf(tx, sent.containerId, sent.containerTareMilligrams, [
-      ...path,
-      "containerId",
-    ]),
-    sackTareMilligrams: tareOf(tx, sent.sackId, sent.sackTareMilligrams, [...path, "sackId"]),
-  };
+  const { reading } = withListedTares(tx, sent, occurredAt, path);
   const refusal = refuseReadings(scale, [reading]);
   if (refusal) throw new AppError(refusal.code, refusal.detail, [...path, "grossMilligrams"]);
   return {
@@ -96,16 +85,4 @@ function weigh(
     mpeMilligrams: mpeOf(scale, [reading]),
     loads: loadsOf(reading, scale),
   };
-}
-
-function tareOf(
-  tx: Tx,
-  containerId: ReadingInput["containerId"],
-  typedMilligrams: number,
-  path: Path,
-): number {
-  if (containerId === null) return typedMilligrams;
-  const container = getContainer(tx, containerId);
-  if (!container) throw new AppError("unknown-container", {}, path);
-  return container.tareMilligrams;
 }

@@ -7,6 +7,7 @@ import type { LabelCode } from "@/lib/core/bag-code";
 import { AppError } from "@/lib/core/errors";
 import type { BagId, SortingId } from "@/lib/core/ids";
 import type { Instant } from "@/lib/core/time";
+import { judgeUndo } from "@/lib/core/undo";
 import { reverseAct } from "@/lib/ledger/commands/post";
 import { takenSince } from "@/lib/ledger/queries/entries";
 import { allow, requirePerson, type Context } from "@/lib/platform/context";
@@ -14,7 +15,6 @@ import { prepared, type Tx } from "@/lib/platform/database";
 import { once } from "@/lib/platform/receipts";
 import type { undoSortingEndpoint } from "../contract";
 import { getWeighedBag } from "../queries/table";
-import { judgeUndo } from "../rules";
 import type { SortingState } from "../terms";
 
 type Stored = {

@@ -6,12 +6,12 @@ import { formatCode } from "@/lib/core/bag-code";
 import { AppError } from "@/lib/core/errors";
 import type { BagId } from "@/lib/core/ids";
 import type { Instant } from "@/lib/core/time";
+import { judgeUndo, undoUntil } from "@/lib/core/undo";
 import { heldBy } from "@/lib/ledger/queries/entries";
 import { UNSORTED } from "@/lib/ledger/terms";
 import { actorId, allow, type Context } from "@/lib/platform/context";
 import { inSnapshot, prepared, type Readable } from "@/lib/platform/database";
 import type { BagToSort, bagToSortEndpoint, SortedBag, SortedFraction } from "../contract";
-import { judgeUndo, undoUntil } from "../rules";
 import { getWeighedBag, listLoads } from "./table";
 
 /**

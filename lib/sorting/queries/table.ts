@@ -5,8 +5,8 @@ import type { BagId, ScaleId, WeighInId } from "@/lib/core/ids";
 import type { PolymerAnswer } from "@/lib/core/plastics";
 import type { Instant } from "@/lib/core/time";
 import { prepared, type Readable } from "@/lib/platform/database";
-import { getScale } from "@/lib/scales/queries";
-import type { Reading } from "@/lib/weighing/rules";
+import { getScale } from "@/lib/scales/queries/scales";
+import type { Reading } from "@/lib/scales/rules/reading";
 import type { Condition } from "@/lib/weighing/terms";
 import { loadsOf, type Load } from "../rules";
 

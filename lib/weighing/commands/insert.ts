@@ -1,11 +1,11 @@
 import "server-only";
 import type { BagId, LotId, PersonId, PointId, ScaleId, WeighInId } from "@/lib/core/ids";
 import type { Kind, PolymerAnswer } from "@/lib/core/plastics";
+import type { ReadingInput } from "@/lib/core/schemas";
 import type { Instant } from "@/lib/core/time";
 import type { Basis } from "@/lib/ledger/terms";
 import { prepared, type Tx } from "@/lib/platform/database";
 import type { Condition, WeighInState } from "../terms";
-import type { StoredReading } from "./instruments";
 
 export type WeighInRow = {
   id: WeighInId;
@@ -27,7 +27,7 @@ export type WeighInRow = {
   oneKind: boolean;
   lotId: LotId | null;
   actId: number | null;
-  readings: readonly StoredReading[];
+  readings: readonly ReadingInput[];
 };
 
 /** Writes the record of a weigh ticket with its readings. */

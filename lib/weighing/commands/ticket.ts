@@ -4,24 +4,22 @@ import { recordAudit } from "@/lib/audit/commands";
 import { assignPointIn, moveBagIn } from "@/lib/bags/commands/move-bag";
 import type { Bag } from "@/lib/bags/queries";
 import type { PersonId, PointId, WeighInId } from "@/lib/core/ids";
+import type { ReadingInput } from "@/lib/core/schemas";
 import type { Instant } from "@/lib/core/time";
+import { undoUntil } from "@/lib/core/undo";
 import { ensureHolder, ensureMaterial, ensureOrigin } from "@/lib/ledger/commands/define";
 import { postAct, type Draft } from "@/lib/ledger/commands/post";
 import { heldBy } from "@/lib/ledger/queries/entries";
 import { UNSORTED } from "@/lib/ledger/terms";
 import type { Context } from "@/lib/platform/context";
 import type { Tx } from "@/lib/platform/database";
-import type { Scale } from "@/lib/scales/queries";
+import type { Scale } from "@/lib/scales/queries/scales";
+import { isBelowMinimum, mpeOf } from "@/lib/scales/rules/reading";
 import { lotForMaterialIn, type OpenLot } from "@/lib/stock/commands/lots";
 import type { WeighInInput, WeighInReceipt } from "../contract";
 import type { WeighIn } from "../queries";
-import { isBelowMinimum, mpeOf, type materialOf } from "../rules";
-import { UNDO_MS } from "../terms";
+import type { materialOf } from "../rules";
 import { insertWeighIn } from "./insert";
-import type { StoredReading } from "./instruments";
-
-/** Scales are not checked against a weight yet, so no reading is on a checked one. */
-const BASIS = "unchecked" as const;
 
 /** A receipt as it is kept for good: with ids of people, never their names. */
 export type KeptReceipt =
@@ -37,7 +35,8 @@ export type Ticket = {
   input: WeighInInput;
   bag: Bag;
   scale: Scale;
-  readings: StoredReading[];
+  readings: ReadingInput[];
+  basis: "checked" | "unchecked";
   pointId: PointId;
   occurredAt: Instant;
   netGrams: number;
@@ -58,7 +57,7 @@ export function keepForReview(tx: Tx, ticket: Ticket, earlier: WeighIn): KeptRec
     weighInId: id,
     code: bag.code,
     netGrams,
-    undoUntil: ctx.now + UNDO_MS,
+    undoUntil: undoUntil(ctx.now),
     earlier: { doneBy: earlier.doneBy, when: earlier.recordedAt, netGrams: earlier.netGrams },
   };
 }
@@ -73,7 +72,7 @@ export function postTicket(
   const { ctx, doneBy, input, bag, scale, netGrams, occurredAt } = ticket;
   const subject = `weigh-in:${input.requestId}`;
   const reading = {
-    basis: BASIS,
+    basis: ticket.basis,
     scaleNumber: scale.number,
     mpeMilligrams: mpeOf(scale, ticket.readings),
   };
@@ -134,7 +133,7 @@ export function postTicket(
     code: bag.code,
     netGrams,
     recordedAt: ctx.now,
-    undoUntil: ctx.now + UNDO_MS,
+    undoUntil: undoUntil(ctx.now),
     belowMinimum: row.belowMinimum,
     tareChanges,
     lot: lot && {
@@ -158,7 +157,7 @@ function rowOf(ticket: Ticket) {
     recordedAt: ctx.now,
     netGrams: ticket.netGrams,
     mpeMilligrams: mpeOf(scale, readings),
-    basis: BASIS,
+    basis: ticket.basis,
     belowMinimum: isBelowMinimum(scale, readings),
     condition: input.condition,
     polymer: input.polymer,

@@ -5,6 +5,7 @@ import { getBagById } from "@/lib/bags/queries";
 import { AppError } from "@/lib/core/errors";
 import type { PersonId, PointId } from "@/lib/core/ids";
 import type { Instant } from "@/lib/core/time";
+import { mayStillUndo } from "@/lib/core/undo";
 import { reverseAct } from "@/lib/ledger/commands/post";
 import { takenSince } from "@/lib/ledger/queries/entries";
 import { allow, requirePerson, type Context } from "@/lib/platform/context";
@@ -12,7 +13,6 @@ import { prepared, type Tx } from "@/lib/platform/database";
 import { once } from "@/lib/platform/receipts";
 import { weighInReceiptSchema, type UndoWeighInInput, type UndoWeighInReceipt } from "../contract";
 import { getWeighIn, type WeighIn } from "../queries";
-import { mayStillUndo } from "../rules";
 
 /**
  * Takes a weigh-in back within ten minutes of its recording, by whoever saved it. The act is reversed and the

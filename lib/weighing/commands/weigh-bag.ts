@@ -9,6 +9,8 @@ import type { Tx } from "@/lib/platform/database";
 import { once } from "@/lib/platform/receipts";
 import { requireScheme } from "@/lib/platform/scheme";
 import { getBuiltInPoint } from "@/lib/points/queries";
+import { basisOf, requireScale, withListedTares } from "@/lib/scales/queries/instruments";
+import { netGramsOf, refuseReadings, type Refusal } from "@/lib/scales/rules/reading";
 import { getColour } from "@/lib/stock/queries/palette";
 import type { WeighInInput, WeighInReceipt } from "../contract";
 import { getPostedWeighIn, helperName, listLastNets } from "../queries";
@@ -17,15 +19,11 @@ import {
   isInFuture,
   materialOf,
   missingOfMaterial,
-  netGramsOf,
   openQuestions,
-  refuseReadings,
   refuseTime,
   usualBag,
-  type Refusal,
 } from "../rules";
 import type { Question } from "../terms";
-import { readInstruments } from "./instruments";
 import { keepForReview, postTicket, type KeptReceipt, type Ticket } from "./ticket";
 
 /**
@@ -33,7 +31,8 @@ import { keepForReview, postTicket, type KeptReceipt, type Ticket } from "./tick
  * for a bag of one kind on into its lot, as one act.
  *
  * A bag that was weighed already is never overwritten: the second reading is kept for review, outside the
- * ledger. What is implausible comes back as a question, and nothing is saved.
+ * ledger. What is implausible comes back as a question, and nothing is saved; the answer goes with the same
+ * request id, to which photos may be bound already.
  *
  * @throws AppError `unknown-code`, `not-a-bag`, `bag-wrong-state`, `unknown-scale`, `unknown-container`,
  *   `unknown-colour`, `unknown-point`, `above-max`, `not-a-step`, `tare-above-gross`, `net-zero`, `too-long-ago`,
@@ -43,8 +42,12 @@ export function weighBag(ctx: Context, input: WeighInInput): WeighInReceipt {
   allow(ctx, "weighing.record");
   const doneBy = requirePerson(ctx);
   if (input.helperId !== null && input.helperId !== doneBy) throw new AppError("other-helper");
-  const kept = once<KeptReceipt>(ctx, "POST /api/weigh-ins", input.requestId, (tx) =>
-    weighBagIn(tx, ctx, doneBy, input),
+  const kept = once<KeptReceipt>(
+    ctx,
+    "POST /api/weigh-ins",
+    input.requestId,
+    (tx) => weighBagIn(tx, ctx, doneBy, input),
+    ({ kind }) => kind !== "ask",
   );
   if (kept.kind !== "kept-for-review") return kept;
   const { doneBy: who, ...earlier } = kept.earlier;
@@ -53,7 +56,14 @@ export function weighBag(ctx: Context, input: WeighInInput): WeighInReceipt {
 
 function weighBagIn(tx: Tx, ctx: Context, doneBy: PersonId, input: WeighInInput): KeptReceipt {
   const bag = requireBag(tx, input.code);
-  const { scale, readings, tareChanges } = readInstruments(tx, input);
+  const scale = requireScale(tx, input.scaleId, input.occurredAt);
+  const listed = input.readings.map((reading, index) =>
+    withListedTares(tx, reading, input.occurredAt, ["readings", index]),
+  );
+  const readings = listed.map(({ reading }) => reading);
+  const tareChanges = listed.flatMap(({ changes }, reading) =>
+    changes.map((change) => ({ reading, ...change })),
+  );
   refuse(refuseReadings(scale, readings));
   refuse(refuseTime(input.occurredAt, requireScheme(tx)));
   const missing = input.oneKind ? missingOfMaterial(input) : null;
@@ -74,6 +84,7 @@ function weighBagIn(tx: Tx, ctx: Context, doneBy: PersonId, input: WeighInInput)
     pointId,
     occurredAt,
     netGrams: netGramsOf(readings),
+    basis: basisOf(tx, scale.id, occurredAt),
   };
 
   const posted = getPostedWeighIn(tx, bag.id);

@@ -9,7 +9,7 @@ import {
   retireContainer,
 } from "@/lib/scales/commands/containers";
 import type { TareKind } from "@/lib/scales/terms";
-import { getContainer, listContainers, listManagedContainers } from "@/lib/scales/queries";
+import { getContainer, listContainers, listManagedContainers } from "@/lib/scales/queries/scales";
 import { commandCases, refusalOf } from "@/tests/support/command-cases";
 import { newScheme, NOON, type TestScheme } from "@/tests/support/scheme";
 

@@ -221,9 +221,12 @@ describe("weighBag", () => {
       questions: [{ question: "far-above-usual", netGrams: 6485, usualGrams: 2160 }],
     });
     expect(count("entries")).toBe(3);
-    expect(desk.weigh(codes[3] ?? "", heavy, { confirmed: ["far-above-usual"] }).kind).toBe(
-      "posted",
-    );
+    // Under one id: a question is no receipt, or photos that wait for the ticket would lose it.
+    const requestId = newId(NOON);
+    expect(desk.weigh(codes[3] ?? "", heavy, { requestId }).kind).toBe("ask");
+    expect(
+      desk.weigh(codes[3] ?? "", heavy, { requestId, confirmed: ["far-above-usual"] }),
+    ).toMatchObject({ kind: "posted", weighInId: requestId });
     // Just three times the usual is not more than three times.
     expect(desk.weigh(codes[4] ?? "", { grossMilligrams: 1_620_000 + 6_480_000 }).kind).toBe(
       "posted",

@@ -7,7 +7,7 @@ import {
   minimumCapacity,
   mpeInService,
   type ScaleSpec,
-} from "@/lib/scales/rules";
+} from "@/lib/scales/rules/scale";
 
 const KG = 1_000_000;
 const G = 1_000;

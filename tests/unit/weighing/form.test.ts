@@ -24,7 +24,7 @@ import { listPointsEndpoint } from "@/lib/points/contract";
 import { listContainersEndpoint, listScalesEndpoint } from "@/lib/scales/contract";
 import { listColoursEndpoint } from "@/lib/stock/contract/palette";
 import { weighInInputSchema } from "@/lib/weighing/contract";
-import type { NamedScale } from "@/lib/weighing/rules";
+import type { NamedScale } from "@/lib/scales/rules/reading";
 
 const SCALE: NamedScale = {
   name: "Bench scale",
@@ -169,6 +169,8 @@ describe("the next bag", () => {
     expect(next).toMatchObject({ code: "", scaleId: SCALE_ID, polymer: "mixed", oneKind: false });
     expect(next.readings).toEqual([{ ...form().readings[0], gross: "" }]);
     expect(isTouched(next)).toBe(false);
+    expect(isTouched({ ...next, photos: true })).toBe(true);
+    expect(next.id).not.toBe(form().id);
     expect(isTouched(form())).toBe(true);
   });
 });

@@ -2,25 +2,27 @@ import * as fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { sentence } from "@/lib/core/messages";
 import { day, dayOf, instant, type Instant } from "@/lib/core/time";
+import { mayStillUndo } from "@/lib/core/undo";
 import {
   isBelowMinimum,
+  mpeOf,
+  netGramsOf,
+  refuseReading,
+  refuseReadings,
+  stepWords,
+  type NamedScale,
+  type Reading,
+} from "@/lib/scales/rules/reading";
+import {
   isFarAboveUsual,
   isInFuture,
   materialOf,
-  mayStillUndo,
   missingOfMaterial,
-  mpeOf,
-  netGramsOf,
   openQuestions,
-  refuseReading,
-  refuseReadings,
   refuseTime,
   startOfDay,
-  stepWords,
   usualBag,
   whenWords,
-  type NamedScale,
-  type Reading,
 } from "@/lib/weighing/rules";
 
 /** Class III, Max 15 kg, e = d = 5 g. */

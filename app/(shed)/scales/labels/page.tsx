@@ -9,7 +9,7 @@ import { tagAddress, type LabelCode } from "@/lib/core/bag-code";
 import { formatMilligrams } from "@/lib/core/mass";
 import { pageContext } from "@/lib/http/page-context";
 import { settings } from "@/lib/platform/env";
-import { listManagedContainers } from "@/lib/scales/queries";
+import { listManagedContainers } from "@/lib/scales/queries/scales";
 
 export const metadata: Metadata = { title: "Print container labels" };
 

@@ -11,7 +11,7 @@ import type {
   listScalesEndpoint,
   listScalesSchema,
   ScaleReceipt,
-} from "./contract";
+} from "../contract";
 
 /** A scale as stored; also what lib/scales/rules.ts takes. Loads in whole milligrams. */
 export type Scale = ScaleReceipt;

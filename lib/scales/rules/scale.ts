@@ -5,8 +5,8 @@
  */
 import type { ErrorDetail } from "@/lib/core/errors";
 import { formatStep } from "@/lib/core/mass";
-import type { ScaleData } from "./contract";
-import type { ScaleClass } from "./terms";
+import type { ScaleData } from "../contract";
+import type { ScaleClass } from "../terms";
 
 /** What the rules need to know of a scale. Loads in whole milligrams. */
 export type ScaleSpec = {

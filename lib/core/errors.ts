@@ -48,6 +48,8 @@ export const ERROR_STATUS = {
   "undo-used-since": 409,
   "undone-already": 409,
   "corrected-already": 409,
+  "undo-of-correction": 409,
+  "not-for-review": 409,
   "piles-empty": 422,
   "sum-beyond-tolerance": 422,
   "sum-far-above-net": 422,

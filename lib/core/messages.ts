@@ -73,6 +73,9 @@ const SENTENCES: Record<ErrorCode, Sentence> = {
   "undo-used-since": () =>
     "Something was taken from it since, so it cannot be undone. Nothing was changed; it can be corrected instead.",
   "undone-already": () => "This was undone already. Nothing was changed.",
+  "undo-of-correction": () =>
+    "This stands in the place of a record that was corrected, so it cannot be undone. Correct it once more instead; nothing was changed.",
+  "not-for-review": () => "Somebody has decided about this reading already. Nothing was changed.",
   "corrected-already": () =>
     "This was corrected already. Nothing was changed; correct the record that stands in its place.",
   "piles-empty": () => "There is no pile and no reject yet. Nothing was saved; weigh at least one.",
@@ -128,6 +131,7 @@ export function sentence(code: ErrorCode, values: ErrorDetail = {}): string {
 const FIELD_SENTENCES: Readonly<Record<string, string>> = {
   empty: "This is needed.",
   "too-long": "This is too long.",
+  "too-short": "Say it in a few words, so that whoever reads the history understands.",
   "not-an-id": "This is not a number that the program gave out. Reload the page and choose again.",
   "not-a-day": "This is not a day. Choose one such as 6 May 2026.",
   "not-an-email": "This is not a mail address. It looks like name@example.org.",

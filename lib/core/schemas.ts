@@ -35,6 +35,9 @@ export function lineSchema(most: number) {
   return z.string().trim().min(1, "empty").max(most, "too-long");
 }
 
+/** Why a record is corrected: for whoever reads its history. */
+export const reasonSchema = z.string().trim().min(3, "too-short").max(500, "too-long");
+
 /** A load of up to 100 tonnes in whole milligrams. */
 export const milligramsSchema = z.number().int().min(0).max(100_000_000_000);
 

@@ -8,24 +8,32 @@ import * as identity from "@/lib/identity/contract";
 import * as ledger from "@/lib/ledger/contract";
 import * as points from "@/lib/points/contract";
 import * as reports from "@/lib/reports/contract";
-import * as scales from "@/lib/scales/contract";
+import * as scaleChecks from "@/lib/scales/contract/checks";
+import * as containers from "@/lib/scales/contract/containers";
+import * as scales from "@/lib/scales/contract/scales";
 import * as sorting from "@/lib/sorting/contract";
 import * as lots from "@/lib/stock/contract/lots";
 import * as palette from "@/lib/stock/contract/palette";
 import * as stock from "@/lib/stock/contract/stock";
-import * as weighing from "@/lib/weighing/contract";
+import * as uploads from "@/lib/uploads/contract";
+import * as weighingCorrections from "@/lib/weighing/contract/corrections";
+import * as weighing from "@/lib/weighing/contract/weigh-ins";
 import * as own from "./own-endpoints";
 
 const CONTRACTS: readonly Readonly<Record<string, unknown>>[] = [
+  uploads,
   identity,
   points,
   bags,
   scales,
+  containers,
+  scaleChecks,
   ledger,
   stock,
   lots,
   palette,
   weighing,
+  weighingCorrections,
   sorting,
   reports,
   own,

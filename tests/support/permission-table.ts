@@ -35,6 +35,7 @@ export const PAGES: Readonly<Record<string, Access>> = {
   "/set-password/[token]": "anybody",
   "/sign-in": "anybody",
   "/account": "signed-in",
+  "/bags/[code]": "shed",
   "/sorting": "shed",
   "/sorting/[code]": "shed",
   "/stock": "shed",
@@ -73,6 +74,8 @@ export const HANDLERS: Readonly<Record<string, Access>> = {
   "GET /api/lots": "shed",
   "GET /api/lots/[number]/movements": "shed",
   "PUT /api/lots/[number]/place": "shed",
+  "GET /api/photos": "shed",
+  "GET /api/photos/[id]": "shed",
   "GET /api/points": "shed",
   "GET /api/reject-reasons": "shed",
   "GET /api/scales": "shed",
@@ -84,6 +87,12 @@ export const HANDLERS: Readonly<Record<string, Access>> = {
   "POST /api/weigh-ins": "shed",
   "GET /api/weigh-ins/today": "shed",
   "POST /api/weigh-ins/[id]/undo": "shed",
+  "POST /api/weigh-ins/[id]/correct": "leading",
+  "POST /api/weigh-ins/[id]/accept": "leading",
+  "POST /api/weigh-ins/[id]/discard": "leading",
+  "GET /api/weigh-ins/for-review": "leading",
+
+  "DELETE /api/photos/[id]": "leading",
 
   "GET /api/people": "coordinator",
   "POST /api/people": "coordinator",
@@ -121,6 +130,10 @@ export const EXCEPTIONS: Readonly<Record<string, string>> = {
     "next-auth's own door; lib/http/auth-route.ts checks origin and size",
   "POST /api/auth/[...nextauth]":
     "next-auth's own door; lib/http/auth-route.ts checks origin and size",
+  "GET /api/uploadthing":
+    "the storage's protocol: what may be sent, the same for everybody; lib/http/upload-route.ts",
+  "POST /api/uploadthing":
+    "the storage's protocol; lib/http/upload-route.ts checks origin, session, permission and size, or the storage's signature",
 };
 
 /** An address with something in the place of each parameter, which need not exist. */

@@ -1,24 +1,13 @@
 /** What was taken later from what an act filled: named before and after a correction. */
 import "server-only";
 import { prepared, type Readable } from "@/lib/platform/database";
-import type { Instant } from "@/lib/core/time";
-import type { EntryKind } from "../terms";
-
-export type LaterUse = {
-  entryId: number;
-  kind: EntryKind;
-  /** "step:<id>" */
-  subject: string;
-  occurredAt: Instant;
-  /** Grams taken from the holders that the act filled. */
-  grams: number;
-};
+import type { LaterUses } from "../contract";
 
 /** Later uses that a screen names one by one; a longer list says how many more there are. */
 const MOST_NAMED = 20;
 
 /** Entries that took from what an act filled and still stand, oldest first. */
-export function listLaterUses(db: Readable, actId: number): { uses: LaterUse[]; count: number } {
+export function listLaterUses(db: Readable, actId: number): LaterUses {
   const all = prepared(
     db.client,
     `select e.id as entryId, e.kind, e.subject, e.occurred_at as occurredAt, -sum(later.grams) as grams
@@ -31,6 +20,6 @@ export function listLaterUses(db: Readable, actId: number): { uses: LaterUse[]; 
         and later.grams < 0 and e.kind not in ('reversal', 'settling')
         and not exists (select 1 from entries back where back.reverses = e.id)
       group by e.id order by e.id`,
-  ).all({ actId }) as LaterUse[];
+  ).all({ actId }) as LaterUses["uses"];
   return { uses: all.slice(0, MOST_NAMED), count: all.length };
 }

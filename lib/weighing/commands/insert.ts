@@ -27,6 +27,8 @@ export type WeighInRow = {
   oneKind: boolean;
   lotId: LotId | null;
   actId: number | null;
+  /** The weigh-in in whose place it stands. */
+  corrects?: WeighInId;
   readings: readonly ReadingInput[];
 };
 
@@ -35,8 +37,8 @@ export function insertWeighIn(tx: Tx, row: WeighInRow): WeighInId {
   prepared(
     tx.client,
     `insert into weigh_ins (id, bag_id, point_id, scale_id, done_by, occurred_at, recorded_at, state, net_grams,
-       mpe_mg, basis, below_minimum, condition, polymer, kind, colour_code, one_kind, lot_id, act_id)
-     values (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?)`,
+       mpe_mg, basis, below_minimum, condition, polymer, kind, colour_code, one_kind, lot_id, act_id, corrects)
+     values (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?)`,
   ).run(
     row.id,
     row.bagId,
@@ -57,6 +59,7 @@ export function insertWeighIn(tx: Tx, row: WeighInRow): WeighInId {
     row.oneKind ? 1 : 0,
     row.lotId,
     row.actId,
+    row.corrects ?? null,
   );
   const insert = prepared(
     tx.client,

@@ -7,18 +7,16 @@ import type { PersonId, PointId, WeighInId } from "@/lib/core/ids";
 import type { ReadingInput } from "@/lib/core/schemas";
 import type { Instant } from "@/lib/core/time";
 import { undoUntil } from "@/lib/core/undo";
-import { ensureHolder, ensureMaterial, ensureOrigin } from "@/lib/ledger/commands/define";
-import { postAct, type Draft } from "@/lib/ledger/commands/post";
+import { postAct } from "@/lib/ledger/commands/post";
 import { heldBy } from "@/lib/ledger/queries/entries";
-import { UNSORTED } from "@/lib/ledger/terms";
 import type { Context } from "@/lib/platform/context";
 import type { Tx } from "@/lib/platform/database";
 import type { Scale } from "@/lib/scales/queries/scales";
 import { isBelowMinimum, mpeOf } from "@/lib/scales/rules/reading";
-import { lotForMaterialIn, type OpenLot } from "@/lib/stock/commands/lots";
-import type { WeighInInput, WeighInReceipt } from "../contract";
-import type { WeighIn } from "../queries";
+import type { WeighInInput, WeighInReceipt } from "../contract/weigh-ins";
+import type { WeighIn } from "../queries/weigh-ins";
 import type { materialOf } from "../rules";
+import { weighInDrafts } from "./drafts";
 import { insertWeighIn } from "./insert";
 
 /** A receipt as it is kept for good: with ids of people, never their names. */
@@ -69,50 +67,18 @@ export function postTicket(
   material: ReturnType<typeof materialOf>,
   tareChanges: Extract<WeighInReceipt, { kind: "posted" }>["tareChanges"],
 ): KeptReceipt {
-  const { ctx, doneBy, input, bag, scale, netGrams, occurredAt } = ticket;
-  const subject = `weigh-in:${input.requestId}`;
-  const reading = {
-    basis: ticket.basis,
-    scaleNumber: scale.number,
-    mpeMilligrams: mpeOf(scale, ticket.readings),
-  };
+  const { ctx, doneBy, input, bag, netGrams } = ticket;
+  const row = rowOf(ticket);
   if (bag.pointId === null) assignPointIn(tx, bag.id, ticket.pointId);
   moveBagIn(tx, bag.id, "weighed", ctx.now);
-  const holderId = ensureHolder(tx, "bag", bag.code);
-  const drafts: Draft[] = [
-    {
-      kind: "weigh-in",
-      occurredAt,
-      subject,
-      lines: [
-        {
-          account: "source",
-          originNo: ensureOrigin(tx, "donated", ticket.pointId),
-          materialId: UNSORTED,
-          grams: -netGrams,
-          ...reading,
-        },
-        { account: "bag", holderId, materialId: UNSORTED, grams: netGrams },
-      ],
-    },
-  ];
-  let lot: (OpenLot & { materialId: number }) | null = null;
-  if (material) {
-    const materialId = ensureMaterial(tx, { ...material, form: "whole", wash: "as-received" });
-    lot = { ...lotForMaterialIn(tx, ctx, materialId), materialId };
-    moveBagIn(tx, bag.id, "sorted", ctx.now);
-    drafts.push({
-      kind: "sort",
-      occurredAt,
-      subject,
-      lines: [
-        { account: "bag", holderId, materialId: UNSORTED, grams: -netGrams },
-        { account: "lot", holderId: lot.holderId, materialId, grams: netGrams, ...reading },
-      ],
-    });
-  }
+  const { drafts, lot } = weighInDrafts(
+    tx,
+    ctx,
+    { ...row, weighInId: row.id, code: bag.code, scaleNumber: ticket.scale.number },
+    material,
+  );
+  if (lot) moveBagIn(tx, bag.id, "sorted", ctx.now);
   const { actId } = postAct(tx, { now: ctx.now, doneBy, sentBy: doneBy, device: null }, drafts);
-  const row = rowOf(ticket);
   const id = insertWeighIn(tx, { ...row, state: "posted", lotId: lot?.lotId ?? null, actId });
   recordAudit(tx, ctx, {
     action: "weighing.record",

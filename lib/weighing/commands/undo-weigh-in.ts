@@ -11,8 +11,12 @@ import { takenSince } from "@/lib/ledger/queries/entries";
 import { allow, requirePerson, type Context } from "@/lib/platform/context";
 import { prepared, type Tx } from "@/lib/platform/database";
 import { once } from "@/lib/platform/receipts";
-import { weighInReceiptSchema, type UndoWeighInInput, type UndoWeighInReceipt } from "../contract";
-import { getWeighIn, type WeighIn } from "../queries";
+import {
+  weighInReceiptSchema,
+  type UndoWeighInInput,
+  type UndoWeighInReceipt,
+} from "../contract/weigh-ins";
+import { getWeighIn, type WeighIn } from "../queries/weigh-ins";
 
 /**
  * Takes a weigh-in back within ten minutes of its recording, by whoever saved it. The act is reversed and the
@@ -61,6 +65,9 @@ function requireUndoable(
   if (weighIn.doneBy !== person) throw new AppError("undo-not-yours");
   if (weighIn.state === "undone" || weighIn.state === "discarded")
     throw new AppError("undone-already");
+  if (weighIn.state === "corrected") throw new AppError("corrected-already");
+  // Taking a correction back would not bring back what it corrected.
+  if (weighIn.corrects !== null) throw new AppError("undo-of-correction");
   if (!mayStillUndo(weighIn.recordedAt, ctx.now)) throw new AppError("undo-too-late");
   return weighIn;
 }
@@ -79,7 +86,7 @@ function discard(tx: Tx, ctx: Context, weighIn: WeighIn): UndoWeighInReceipt {
 }
 
 /** The weigh-in's own receipt, which is kept for good, says what its bag was before. */
-function bagBefore(tx: Tx, weighIn: WeighIn): BagBefore {
+export function bagBefore(tx: Tx, weighIn: Pick<WeighIn, "id">): BagBefore {
   const answer = prepared(tx.client, "select answer from receipts where request_id = ?")
     .pluck()
     .get(weighIn.id) as string | undefined;

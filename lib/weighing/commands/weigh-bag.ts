@@ -12,8 +12,8 @@ import { getBuiltInPoint } from "@/lib/points/queries";
 import { basisOf, requireScale, withListedTares } from "@/lib/scales/queries/instruments";
 import { netGramsOf, refuseReadings, type Refusal } from "@/lib/scales/rules/reading";
 import { getColour } from "@/lib/stock/queries/palette";
-import type { WeighInInput, WeighInReceipt } from "../contract";
-import { getPostedWeighIn, helperName, listLastNets } from "../queries";
+import type { WeighInInput, WeighInReceipt } from "../contract/weigh-ins";
+import { getPostedWeighIn, helperName, listLastNets } from "../queries/weigh-ins";
 import {
   isFarAboveUsual,
   isInFuture,

@@ -1,5 +1,5 @@
 import { route } from "@/lib/http/route";
-import { todayEndpoint } from "@/lib/weighing/contract";
-import { getToday } from "@/lib/weighing/queries";
+import { todayEndpoint } from "@/lib/weighing/contract/weigh-ins";
+import { getToday } from "@/lib/weighing/queries/weigh-ins";
 
 export const GET = route(todayEndpoint, getToday);

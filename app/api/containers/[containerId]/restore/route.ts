@@ -1,5 +1,5 @@
 import { route } from "@/lib/http/route";
 import { restoreContainer } from "@/lib/scales/commands/containers";
-import { restoreContainerEndpoint } from "@/lib/scales/contract";
+import { restoreContainerEndpoint } from "@/lib/scales/contract/containers";
 
 export const POST = route(restoreContainerEndpoint, restoreContainer);

@@ -1,5 +1,5 @@
 import { route } from "@/lib/http/route";
 import { retireContainer } from "@/lib/scales/commands/containers";
-import { retireContainerEndpoint } from "@/lib/scales/contract";
+import { retireContainerEndpoint } from "@/lib/scales/contract/containers";
 
 export const POST = route(retireContainerEndpoint, retireContainer);

@@ -11,9 +11,9 @@ import { allow, requirePerson, type Context } from "@/lib/platform/context";
 import { inSnapshot, prepared, type Readable } from "@/lib/platform/database";
 import { requireScheme } from "@/lib/platform/scheme";
 import { getContainer } from "@/lib/scales/queries/scales";
-import type { Scanned, Ticket, Today, TodayInput } from "./contract";
-import { startOfDay } from "./rules";
-import type { Condition, WeighInState } from "./terms";
+import type { Scanned, Ticket, Today, TodayInput } from "../contract/weigh-ins";
+import { startOfDay } from "../rules";
+import type { Condition, WeighInState } from "../terms";
 
 export type WeighIn = {
   id: WeighInId;
@@ -24,10 +24,11 @@ export type WeighIn = {
   state: WeighInState;
   netGrams: number;
   actId: number | null;
+  corrects: WeighInId | null;
 };
 
 const WEIGH_IN = `w.id, w.bag_id as bagId, b.code, w.done_by as doneBy, w.recorded_at as recordedAt, w.state,
-  w.net_grams as netGrams, w.act_id as actId`;
+  w.net_grams as netGrams, w.act_id as actId, w.corrects`;
 
 /** The weigh-in of a bag that counts, if it was weighed. At most one per bag. */
 export function getPostedWeighIn(db: Readable, bagId: BagId): WeighIn | null {

@@ -19,7 +19,7 @@ import {
   UNDO_WEIGH_IN_ADDRESS,
   WEIGH_IN_ADDRESS,
   WEIGH_IN_STATES,
-} from "./terms";
+} from "../terms";
 
 export const weighInInputSchema = z.object({
   /** Made by the client; the id of the weigh-in. */

@@ -1,7 +1,7 @@
 /** What lies on the table as typed, kept on this device until it is saved; and what it comes to. */
 import { newId } from "@/lib/core/ids";
 import type { Form, Kind, WashState } from "@/lib/core/plastics";
-import type { CloseSortingInput, PILE_POLYMERS } from "@/lib/sorting/contract";
+import type { CloseSortingInput, PILE_POLYMERS } from "@/lib/sorting/contract/sortings";
 import { netGramsOf, type Reading } from "@/lib/scales/rules/reading";
 import { emptyReading, type ReadingValue } from "../weighing/form-values";
 import { readReading, type ListedTare } from "../weighing/read-form";
@@ -64,7 +64,14 @@ export function bodyOf(draft: Draft, tares: readonly ListedTare[]): Body | null 
     const read = readReading(reading, tares);
     if (!read.ok || polymer === "" || kind === "" || colourCode === "") return null;
     // The ids come from the lists of this program; the server checks each.
-    piles.push({ ...rest, polymer, kind, colourCode, reading: read.reading as SentReading });
+    piles.push({
+      ...rest,
+      polymer,
+      kind,
+      colourCode,
+      lot: null,
+      reading: read.reading as SentReading,
+    });
   }
   for (const { reason, reading } of draft.rejects) {
     const read = readReading(reading, tares);

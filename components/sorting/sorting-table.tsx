@@ -12,8 +12,8 @@ import { SelectField } from "@/components/ui/select-field";
 import { formatCode } from "@/lib/core/bag-code";
 import { instant } from "@/lib/core/time";
 import type { LossCause } from "@/lib/ledger/terms";
-import type { BagToSort, closeSortingEndpoint, RejectReason } from "@/lib/sorting/contract";
-import { judgeSum, loadsOf, toleranceOf } from "@/lib/sorting/rules";
+import type { BagToSort, closeSortingEndpoint, RejectReason } from "@/lib/sorting/contract/sortings";
+import { judgeSum, loadsOf, toleranceOf } from "@/lib/sorting/rules/table";
 import { CLOSE_SORTING_ADDRESS } from "@/lib/sorting/terms";
 import { netGramsOf } from "@/lib/scales/rules/reading";
 import { rememberedScale, rememberScale } from "../weighing/remembered-scale";
@@ -71,7 +71,7 @@ export function SortingTable({ bag, lists, reasons }: Props) {
   async function send(answer: { cause: LossCause | null; confirmedAbove: boolean }) {
     if (!body || !scale) return;
     const result = await save.send({
-      code: bag.code,
+      codes: [bag.code],
       scaleId: scale.id,
       occurredAt: instant(Date.now()),
       ...body,

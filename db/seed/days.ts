@@ -187,7 +187,7 @@ function sort(cast: Cast, bag: Waiting, tools: Tools, when: Instant): void {
   const ctx = cast.as(random.pick(cast.volunteers), "volunteer", instant(when + 60_000));
   const input = {
     requestId: cast.requestId(ctx.now),
-    code: bag.code,
+    codes: [bag.code],
     scaleId: tools.bench,
     occurredAt: when,
     piles: materials.map((material, index) => ({
@@ -196,6 +196,7 @@ function sort(cast: Cast, bag: Waiting, tools: Tools, when: Instant): void {
       kind: material.kind,
       form: "whole" as const,
       wash: "as-received" as const,
+      lot: null,
       reading: reading(shares[index] ?? STEP),
     })),
     rejects: rejected > 0 ? [{ reason: random.weighted(REJECTS), reading: reading(rejected) }] : [],

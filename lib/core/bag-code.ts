@@ -81,6 +81,13 @@ export function drawCode(randomInt: (below: number) => number): LabelCode {
   }
 }
 
+/** The seven random symbols as one number, 0 to 32^7 − 1: a draw that anybody can repeat. */
+export function codeNumber(code: LabelCode): number {
+  let number = 0;
+  for (const symbol of code.slice(0, 7)) number = number * 32 + CODE_SYMBOLS.indexOf(symbol);
+  return number;
+}
+
 /** What the QR of a tag holds: all in capitals, so that the symbol stays in alphanumeric mode. */
 export function tagAddress(publicUrl: string, code: LabelCode): string {
   return `${publicUrl.replace(/\/+$/, "")}/B/${code}`.toUpperCase();

@@ -5,10 +5,14 @@
 import { CAPTURE_SENTENCES, text, type Sentence } from "./capture-messages";
 import type { ErrorCode, ErrorDetail } from "./errors";
 import { PHOTO_SENTENCES } from "./photo-messages";
+import { STOCK_SENTENCES } from "./stock-messages";
+import { REMOVAL_SENTENCES } from "./removal-messages";
 
 const SENTENCES: Record<ErrorCode, Sentence> = {
   ...CAPTURE_SENTENCES,
   ...PHOTO_SENTENCES,
+  ...STOCK_SENTENCES,
+  ...REMOVAL_SENTENCES,
   "signed-out": () => "You are not signed in. What you typed is kept; sign in and send it again.",
   "wrong-sign-in": () => "That address and password do not fit together. Check both and try again.",
   "sign-in-slowed": (v) =>
@@ -78,6 +82,17 @@ const SENTENCES: Record<ErrorCode, Sentence> = {
   "not-for-review": () => "Somebody has decided about this reading already. Nothing was changed.",
   "corrected-already": () =>
     "This was corrected already. Nothing was changed; correct the record that stands in its place.",
+  "lot-closed": ({ lot }) =>
+    `Lot ${lot} takes no more: it was closed meanwhile. Nothing was saved and nothing that you typed is lost; choose another lot or a new one.`,
+  "lot-other-material": ({ lot }) =>
+    `Lot ${lot} holds something else. Nothing was saved; choose another lot or a new one.`,
+  "bag-in-other-session": ({ code, who }) =>
+    `Bag ${code} is on the table of ${who}. Nothing was saved and nothing that you typed is lost; sort it there, or take it off that table first.`,
+  "draft-overtaken": ({ who }) =>
+    `${who} has changed this session meanwhile. What you typed is still here and was not sent; look at the other's first.`,
+  "draft-over": () =>
+    "This session was saved or given up meanwhile. What you typed is still here; start a new one if it is needed.",
+  "no-bags": () => "There is no bag on the table. Scan one first.",
   "piles-empty": () => "There is no pile and no reject yet. Nothing was saved; weigh at least one.",
   "sum-beyond-tolerance": (v) =>
     `The piles add up to ${text(v.sumKg)} kg of ${text(v.netKg)} kg; ${text(v.differenceKg)} kg is more than the scale can explain (${text(v.toleranceKg)} kg). Nothing was saved; weigh the piles again, or say where it went.`,
@@ -132,12 +147,17 @@ const FIELD_SENTENCES: Readonly<Record<string, string>> = {
   empty: "This is needed.",
   "too-long": "This is too long.",
   "too-short": "Say it in a few words, so that whoever reads the history understands.",
+  "not-a-number": "This is not a number. Look at the label.",
+  "too-long-minutes": "That is more than two weeks. Type the minutes.",
   "not-an-id": "This is not a number that the program gave out. Reload the page and choose again.",
   "not-a-day": "This is not a day. Choose one such as 6 May 2026.",
   "not-an-email": "This is not a mail address. It looks like name@example.org.",
   "whole-number": "This is a number without decimals, such as 40.",
   "too-few": "At least 1 is needed.",
   "too-many": "That is more than goes in one order. Make two.",
+  "not-a-waste-code":
+    "A code of the List of Waste has six figures, such as 20 01 39, and a * where it is hazardous.",
+  "mixed-sources": "The reject bin and lots leave in removals of their own.",
   "not-a-hex": "A colour value is # and six signs, such as #1f46d6.",
   "not-a-colour": "That is no colour of the palette. Reload the page and choose again.",
   "wrong-check": "The last character does not fit the code. Check it against the label.",

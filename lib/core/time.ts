@@ -50,6 +50,17 @@ export function dayOf(at: Instant, zone: string): Day {
   return format.format(at) as Day;
 }
 
+const HALF_DAY_MS = 43_200_000;
+
+/** An instant well within a day of a zone: for a record that knows its day and no hour. */
+export function middayOf(of: Day, zone: string): Instant {
+  const noon = Date.parse(`${of}T12:00:00Z`);
+  // Zones lie up to 14 hours ahead of UTC and 12 behind: noon there, or the midnight before it, falls on the day.
+  return dayOf(noon as Instant, zone) === of
+    ? (noon as Instant)
+    : ((noon - HALF_DAY_MS) as Instant);
+}
+
 /** Does the runtime know this IANA zone? */
 export function isZone(zone: string): boolean {
   try {

@@ -11,7 +11,8 @@ import * as reports from "@/lib/reports/contract";
 import * as scaleChecks from "@/lib/scales/contract/checks";
 import * as containers from "@/lib/scales/contract/containers";
 import * as scales from "@/lib/scales/contract/scales";
-import * as sorting from "@/lib/sorting/contract";
+import * as sortingDrafts from "@/lib/sorting/contract/drafts";
+import * as sorting from "@/lib/sorting/contract/sortings";
 import * as lots from "@/lib/stock/contract/lots";
 import * as palette from "@/lib/stock/contract/palette";
 import * as stock from "@/lib/stock/contract/stock";
@@ -35,6 +36,7 @@ const CONTRACTS: readonly Readonly<Record<string, unknown>>[] = [
   weighing,
   weighingCorrections,
   sorting,
+  sortingDrafts,
   reports,
   own,
 ];

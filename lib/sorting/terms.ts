@@ -24,12 +24,18 @@ export const FIRST_REJECT_REASONS = [
   { code: "no-use", name: "No use for it now", warning: false },
 ] as const;
 
-/** Piles and rejects that one bag can be split into. */
+/** Bags that can be tipped together. */
+export const MOST_BAGS = 40;
+/** Piles and rejects of one session. */
 export const MOST_FRACTIONS = 60;
 
 /** Where the endpoints are, for a page that sends without carrying the contract's schemas. */
 export const CLOSE_SORTING_ADDRESS = { method: "POST", path: "/api/sortings" } as const;
 export const UNDO_SORTING_ADDRESS = { method: "POST", path: "/api/sortings/{id}/undo" } as const;
+export const CORRECT_SORTING_ADDRESS = {
+  method: "POST",
+  path: "/api/sortings/{id}/correct",
+} as const;
 export const WAITING_BAGS_ADDRESS = { method: "GET", path: "/api/sortings/waiting" } as const;
 export const BAG_TO_SORT_ADDRESS = { method: "GET", path: "/api/sortings/bags/{code}" } as const;
 export const REJECT_REASONS_ADDRESS = { method: "GET", path: "/api/reject-reasons" } as const;

@@ -32,6 +32,14 @@ export type RecordState = (typeof RECORD_STATES)[number];
 /** Why a lot takes no more: its container is full or empty, a step began, it grew old, it was merged, somebody said so. */
 export const LOT_ENDS = ["full", "empty", "step", "age", "merged", "by-hand"] as const;
 export type LotEnd = (typeof LOT_ENDS)[number];
+export const LOT_END_NAMES: Record<LotEnd, string> = {
+  full: "its container is full",
+  empty: "its container is empty",
+  step: "a step began",
+  age: "it was open for the set weeks",
+  merged: "it went into another lot",
+  "by-hand": "somebody closed it",
+};
 
 /**
  * count: the container was weighed. empty: the bin is empty. on-the-spot: more was wanted than the book held.
@@ -39,16 +47,45 @@ export type LotEnd = (typeof LOT_ENDS)[number];
  */
 export const COUNT_KINDS = ["count", "empty", "on-the-spot", "opening"] as const;
 export type CountKind = (typeof COUNT_KINDS)[number];
+export const COUNT_KIND_NAMES: Record<CountKind, string> = {
+  count: "Counted",
+  empty: "Bin is empty",
+  "on-the-spot": "Counted on the spot",
+  opening: "Opening stock",
+};
 
 export const MOVE_KINDS = ["merge", "split", "identify"] as const;
 export type MoveKind = (typeof MOVE_KINDS)[number];
+export const MOVE_KIND_NAMES: Record<MoveKind, string> = {
+  merge: "Merged",
+  split: "Split off",
+  identify: "Identified",
+};
 
 /** How "Not sure" was found out: the code on the item, floats or sinks, how it bends, asked somebody who knows. */
 export const IDENTIFY_METHODS = ["code", "float", "flexibility", "asked"] as const;
 export type IdentifyMethod = (typeof IDENTIFY_METHODS)[number];
+export const IDENTIFY_METHOD_NAMES: Record<IdentifyMethod, string> = {
+  code: "Code on the item",
+  float: "Floats or sinks",
+  flexibility: "How it bends",
+  asked: "Asked somebody who knows",
+};
 
 export const STEP_KINDS = ["washing", "drying", "shredding"] as const;
 export type StepKind = (typeof STEP_KINDS)[number];
+export const STEP_KIND_NAMES: Record<StepKind, string> = {
+  washing: "Washing",
+  drying: "Drying",
+  shredding: "Shredding",
+};
 
 /** Taken out and weighed, or weighed back: the container before less after. */
 export const TAKING = ["taken", "weighed-back"] as const;
+export type Taking = (typeof TAKING)[number];
+
+/** Readings of one weighing: a big bin is weighed in several goes. */
+export const MOST_READINGS = 12;
+/** Lots that one step can draw from, and readings that can come out of it. */
+export const MOST_STEP_INPUTS = 12;
+export const MOST_STEP_OUTPUTS = 24;

@@ -9,7 +9,7 @@ import { postAct } from "@/lib/ledger/commands/post";
 import { UNSORTED } from "@/lib/ledger/terms";
 import { inTransaction, type Tx } from "@/lib/platform/database";
 import { setUpSortingIn } from "@/lib/sorting/commands/set-up";
-import type { CloseSortingInput } from "@/lib/sorting/contract";
+import type { CloseSortingInput } from "@/lib/sorting/contract/sortings";
 import { setUpPaletteIn } from "@/lib/stock/commands/palette";
 import type { ReadingInput } from "@/lib/core/schemas";
 import { newScheme, NOON, type TestScheme } from "./scheme";
@@ -145,13 +145,14 @@ export function onPan(netGrams: number): ReadingInput {
 type PileOf = {
   colour?: string;
   polymer?: CloseSortingInput["piles"][number]["polymer"];
+  lot?: CloseSortingInput["piles"][number]["lot"];
   grams: number;
 };
 
-/** A sorting of one bag as a client sends it. */
+/** A sorting of one bag or several as a client sends it. */
 export function sorting(
   shed: Shed,
-  bag: WeighedIn,
+  bag: WeighedIn | readonly WeighedIn[],
   of: {
     piles?: readonly PileOf[];
     rejects?: readonly { reason?: string; grams: number }[];
@@ -162,7 +163,7 @@ export function sorting(
 ): CloseSortingInput {
   return {
     requestId: newId(of.at ?? NOON),
-    code: bag.code,
+    codes: ("code" in bag ? [bag] : bag).map(({ code }) => code),
     scaleId: shed.scaleId,
     occurredAt: of.at ?? NOON,
     piles: (of.piles ?? []).map((pile) => ({
@@ -171,6 +172,7 @@ export function sorting(
       kind: "lids" as const,
       form: "whole" as const,
       wash: "as-received" as const,
+      lot: pile.lot ?? null,
       reading: onPan(pile.grams),
     })),
     rejects: (of.rejects ?? []).map((reject) => ({

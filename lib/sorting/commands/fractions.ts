@@ -9,8 +9,8 @@ import { prepared, type Tx } from "@/lib/platform/database";
 import { withListedTares } from "@/lib/scales/queries/instruments";
 import type { Scale } from "@/lib/scales/queries/scales";
 import { mpeOf, netGramsOf, refuseReadings, tareMilligrams } from "@/lib/scales/rules/reading";
-import type { CloseSortingInput } from "../contract";
-import { loadsOf, type Load } from "../rules";
+import type { TableInput } from "../contract/sortings";
+import { loadsOf, type Load } from "../rules/table";
 
 export type Fraction = {
   /** {@link REJECT} for a reject. */
@@ -29,12 +29,17 @@ type Path = readonly (string | number)[];
  * @throws AppError `unknown-container`, `above-max`, `not-a-step`, `tare-above-gross`, `net-zero`,
  *   `unknown-colour`, `unknown-reason`, each with the path of the field
  */
-export function readFractions(tx: Tx, input: CloseSortingInput, scale: Scale): Fraction[] {
+export function readFractions(
+  tx: Tx,
+  input: TableInput,
+  scale: Scale,
+  tablePath: Path = [],
+): Fraction[] {
   return [
     ...input.piles.map((pile, at) => {
-      const path = ["piles", at] as const;
+      const path = [...tablePath, "piles", at];
       requireListed(tx, "colours", pile.colourCode, "unknown-colour", [...path, "colourCode"]);
-      const { reading, ...material } = pile;
+      const { reading, lot: _lot, ...material } = pile;
       return {
         ...weigh(tx, reading, scale, input.occurredAt, [...path, "reading"]),
         materialId: ensureMaterial(tx, material),
@@ -42,7 +47,7 @@ export function readFractions(tx: Tx, input: CloseSortingInput, scale: Scale): F
       };
     }),
     ...input.rejects.map((reject, at) => {
-      const path = ["rejects", at] as const;
+      const path = [...tablePath, "rejects", at];
       requireListed(tx, "reject_reasons", reject.reason, "unknown-reason", [...path, "reason"]);
       return {
         ...weigh(tx, reject.reading, scale, input.occurredAt, [...path, "reading"]),

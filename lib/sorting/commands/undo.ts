@@ -13,8 +13,8 @@ import { takenSince } from "@/lib/ledger/queries/entries";
 import { allow, requirePerson, type Context } from "@/lib/platform/context";
 import { prepared, type Tx } from "@/lib/platform/database";
 import { once } from "@/lib/platform/receipts";
-import type { undoSortingEndpoint } from "../contract";
-import { getWeighedBag } from "../queries/table";
+import type { undoSortingEndpoint } from "../contract/sortings";
+import { getWeighedBag, listBagsOf } from "../queries/table";
 import type { SortingState } from "../terms";
 
 type Stored = {
@@ -23,12 +23,11 @@ type Stored = {
   doneBy: string;
   recordedAt: Instant;
   actId: number;
-  bagId: BagId;
-  code: LabelCode;
+  corrects: SortingId | null;
 };
 
 /**
- * Takes a sorting back: the exact negative of its act; the bag waits again, since when it was weighed. Lots
+ * Takes a sorting back: the exact negative of its act; its bags wait again, since when they were weighed. Lots
  * that it opened stay, empty, because their labels may be printed already.
  *
  * @throws AppError `not-found`, `undone-already`, `undo-not-yours`, `undo-too-late`, `undo-used-since`
@@ -47,6 +46,8 @@ export function undoSorting(
       const sorting = requireSorting(tx, input.id);
       const verdict = judgeUndo(sorting, person, ctx.now);
       if (verdict !== "fine") throw new AppError(verdict);
+      // Taking a correction back would not bring back what it corrected.
+      if (sorting.corrects !== null) throw new AppError("undo-of-correction");
       if (takenSince(tx, sorting.actId)) throw new AppError("undo-used-since");
 
       const { actId } = reverseAct(
@@ -58,30 +59,38 @@ export function undoSorting(
         tx.client,
         "update sorting_sessions set state = 'undone', undone_act_id = ? where id = ?",
       ).run(actId, sorting.id);
-      prepared(tx.client, "update sorting_bags set live = 0 where session_id = ?").run(sorting.id);
-      const weighed = getWeighedBag(tx, sorting.bagId, sorting.code);
-      moveBagIn(tx, sorting.bagId, "weighed", weighed?.recordedAt ?? ctx.now);
+      const bags = releaseBagsIn(tx, ctx, sorting.id);
       recordAudit(tx, ctx, {
         action: "sorting.undo",
         subjectKind: "sorting",
         subjectId: sorting.id,
-        fields: { bagId: sorting.bagId, undoneActId: actId },
+        fields: { bags: bags.map(({ id }) => id).join(" "), undoneActId: actId },
         actId,
       });
-      return { sortingId: sorting.id, code: sorting.code, bagState: "weighed" };
+      return { sortingId: sorting.id, codes: bags.map(({ code }) => code), bagState: "weighed" };
     },
   );
 }
 
-function requireSorting(tx: Tx, id: SortingId): Stored {
+/** The bags of a session that no longer stands wait again, since when they were weighed. */
+export function releaseBagsIn(
+  tx: Tx,
+  ctx: Context,
+  sortingId: SortingId,
+): { id: BagId; code: LabelCode }[] {
+  const bags = listBagsOf(tx, sortingId);
+  prepared(tx.client, "update sorting_bags set live = 0 where session_id = ?").run(sortingId);
+  for (const { id, code } of bags) {
+    moveBagIn(tx, id, "weighed", getWeighedBag(tx, id, code)?.recordedAt ?? ctx.now);
+  }
+  return bags;
+}
+
+export function requireSorting(tx: Tx, id: SortingId): Stored {
   const found = prepared(
     tx.client,
-    `select s.id, s.state, s.done_by as doneBy, s.recorded_at as recordedAt, s.act_id as actId,
-            b.id as bagId, b.code
-       from sorting_sessions s
-       join sorting_bags sb on sb.session_id = s.id
-       join bags b on b.id = sb.bag_id
-      where s.id = ?`,
+    `select id, state, done_by as doneBy, recorded_at as recordedAt, act_id as actId, corrects
+       from sorting_sessions where id = ?`,
   ).get(id) as Stored | undefined;
   if (!found) throw new AppError("not-found");
   return found;

@@ -11,7 +11,7 @@ import { heldBy } from "@/lib/ledger/queries/entries";
 import { UNSORTED } from "@/lib/ledger/terms";
 import { actorId, allow, type Context } from "@/lib/platform/context";
 import { inSnapshot, prepared, type Readable } from "@/lib/platform/database";
-import type { BagToSort, bagToSortEndpoint, SortedBag, SortedFraction } from "../contract";
+import type { BagToSort, bagToSortEndpoint, SortedBag, SortedFraction } from "../contract/sortings";
 import { getWeighedBag, listLoads } from "./table";
 
 /**

@@ -2,7 +2,7 @@ import "server-only";
 import type * as z from "zod";
 import { allow, type Context } from "@/lib/platform/context";
 import { prepared } from "@/lib/platform/database";
-import type { RejectReason, rejectReasonsEndpoint } from "../contract";
+import type { RejectReason, rejectReasonsEndpoint } from "../contract/sortings";
 
 /** Reasons in use, in their order. */
 export function listRejectReasons(

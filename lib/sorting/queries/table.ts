@@ -1,14 +1,14 @@
 /** What lies on the sorting table: a weighed bag with the readings behind its net. */
 import "server-only";
 import type { LabelCode } from "@/lib/core/bag-code";
-import type { BagId, ScaleId, WeighInId } from "@/lib/core/ids";
+import type { BagId, ScaleId, SortingId, WeighInId } from "@/lib/core/ids";
 import type { PolymerAnswer } from "@/lib/core/plastics";
 import type { Instant } from "@/lib/core/time";
 import { prepared, type Readable } from "@/lib/platform/database";
 import { getScale } from "@/lib/scales/queries/scales";
 import type { Reading } from "@/lib/scales/rules/reading";
 import type { Condition } from "@/lib/weighing/terms";
-import { loadsOf, type Load } from "../rules";
+import { loadsOf, type Load } from "../rules/table";
 
 export type WeighedBag = {
   weighInId: WeighInId;
@@ -30,6 +30,15 @@ export function getWeighedBag(db: Readable, bagId: BagId, code: LabelCode): Weig
       where w.bag_id = @bagId and w.state = 'posted'`,
   ).get({ bagId, code });
   return (row as WeighedBag | undefined) ?? null;
+}
+
+/** The bags of a session, in the order of their codes. */
+export function listBagsOf(db: Readable, sortingId: SortingId): { id: BagId; code: LabelCode }[] {
+  return prepared(
+    db.client,
+    `select b.id, b.code from sorting_bags sb join bags b on b.id = sb.bag_id
+      where sb.session_id = ? order by b.code`,
+  ).all(sortingId) as { id: BagId; code: LabelCode }[];
 }
 
 /** The readings of a weigh-in as loads on its scale; they belong to the tolerance of its sorting. */

@@ -4,7 +4,7 @@ import type * as z from "zod";
 import { UNSORTED } from "@/lib/ledger/terms";
 import { allow, type Context } from "@/lib/platform/context";
 import { inSnapshot, prepared } from "@/lib/platform/database";
-import type { WaitingBag, waitingBagsEndpoint } from "../contract";
+import type { WaitingBag, waitingBagsEndpoint } from "../contract/sortings";
 
 const PAGE = 50;
 

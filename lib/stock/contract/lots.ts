@@ -3,13 +3,8 @@ import * as z from "zod";
 import { endpoint } from "@/lib/core/endpoint";
 import { FORMS, KINDS, POLYMER_ANSWERS, WASH_STATES } from "@/lib/core/plastics";
 import { requestIdSchema } from "@/lib/core/schemas";
-import { COLOUR_LOOKS } from "../terms";
-
-/** From a path or a query string: "118". */
-const numberSchema = z
-  .union([z.number(), z.string().regex(/^\d{1,9}$/, "not-a-number")])
-  .transform(Number)
-  .pipe(z.number().int().min(1));
+import { COLOUR_LOOKS, LOT_ENDS } from "../terms";
+import { lotNumberSchema } from "./weighed";
 
 export const materialSchema = z.object({
   polymer: z.enum(POLYMER_ANSWERS),
@@ -28,6 +23,9 @@ export const lotSummarySchema = materialSchema.extend({
   place: z.string(),
   openedAt: z.number().int(),
   closedAt: z.number().int().nullable(),
+  closedFor: z.enum(LOT_ENDS).nullable(),
+  /** The listed container that it lies in. */
+  containerName: z.string().nullable(),
   heldGrams: z.number().int(),
 });
 export type LotSummary = z.output<typeof lotSummarySchema>;
@@ -46,7 +44,7 @@ export const listLotsEndpoint = endpoint({
     form: z.enum(FORMS).optional(),
     wash: z.enum(WASH_STATES).optional(),
     /** Number of the last lot of the page before. */
-    after: numberSchema.optional(),
+    after: lotNumberSchema.optional(),
   }),
   output: z.object({
     lots: z.array(lotSummarySchema),
@@ -62,7 +60,7 @@ export const lotsPageSchema = z.object({
   kind: z.enum(KINDS).optional().catch(undefined),
   form: z.enum(FORMS).optional().catch(undefined),
   wash: z.enum(WASH_STATES).optional().catch(undefined),
-  after: numberSchema.optional().catch(undefined),
+  after: lotNumberSchema.optional().catch(undefined),
 });
 
 export const lotMovementSchema = z.object({
@@ -89,7 +87,7 @@ export const lotMovementsEndpoint = endpoint({
   summary: "Everything that ever went into or out of a lot, newest first, in pages.",
   permission: "stock.read",
   input: z.object({
-    number: numberSchema,
+    number: lotNumberSchema,
     /** Entry and line of the last movement of the page before, "1204.3". */
     before: z
       .string()
@@ -106,7 +104,7 @@ export const setLotPlaceEndpoint = endpoint({
   permission: "stock.edit",
   input: z.object({
     requestId: requestIdSchema,
-    number: numberSchema,
+    number: lotNumberSchema,
     place: z.string().trim().max(80, "too-long"),
   }),
   output: z.object({ number: z.number().int(), place: z.string() }),

@@ -136,7 +136,7 @@ describe("closing a sorting", () => {
     const early = sorting(shed, printed, { piles: [{ grams: 800 }] });
     expect(() => closeSorting(shed.ctx("volunteer"), early)).toThrow("bag-not-weighed");
 
-    const foreign = { ...again, requestId: newId(), code: "00000002" as typeof again.code };
+    const foreign = { ...again, requestId: newId(), codes: ["00000002"] as typeof again.codes };
     expect(() => closeSorting(shed.ctx("volunteer"), foreign)).toThrow("unknown-code");
   });
 });

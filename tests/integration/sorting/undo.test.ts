@@ -30,7 +30,7 @@ describe("undoing a sorting", () => {
   it("takes everything back and leaves the opened lot, empty", () => {
     expect(undoSorting(shed.ctx("volunteer"), undo())).toEqual({
       sortingId: id,
-      code: bag.code,
+      codes: [bag.code],
       bagState: "weighed",
     });
     expect(

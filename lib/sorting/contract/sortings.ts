@@ -8,20 +8,24 @@ import {
   idSchema,
   instantSchema,
   readingSchema,
+  reasonSchema,
   requestIdSchema,
 } from "@/lib/core/schemas";
+import { laterUsesSchema } from "@/lib/ledger/contract";
 import { LOSS_CAUSES } from "@/lib/ledger/terms";
 import { SCALE_CLASSES } from "@/lib/scales/terms";
 import { CONDITIONS } from "@/lib/weighing/terms";
 import {
   BAG_TO_SORT_ADDRESS,
   CLOSE_SORTING_ADDRESS,
+  CORRECT_SORTING_ADDRESS,
+  MOST_BAGS,
   MOST_FRACTIONS,
   REJECT_REASONS_ADDRESS,
   SORTING_STATES,
   UNDO_SORTING_ADDRESS,
   WAITING_BAGS_ADDRESS,
-} from "./terms";
+} from "../terms";
 
 /** What a pile can be said to be: "Mixed, to sort" is not among them, it is what a bag is before. */
 export const PILE_POLYMERS = [...POLYMERS, "not-sure"] as const;
@@ -32,6 +36,11 @@ export const pileSchema = z.object({
   kind: z.enum(KINDS),
   form: z.enum(FORMS).default("whole"),
   wash: z.enum(WASH_STATES).default("as-received"),
+  /** Number of the lot that it joins, or a new one; null: the one that is open for it, or opens by itself. */
+  lot: z
+    .union([z.literal("new"), z.number().int().min(1)])
+    .nullable()
+    .default(null),
   reading: readingSchema,
 });
 export type PileInput = z.output<typeof pileSchema>;
@@ -42,11 +51,8 @@ export const rejectSchema = z.object({
 });
 export type RejectInput = z.output<typeof rejectSchema>;
 
-export const closeSortingSchema = z.object({
-  /** Made by the client; the id of the sorting. */
-  requestId: requestIdSchema,
-  /** The bag's tag. Several bags on one table come with the bench. */
-  code: codeSchema,
+/** What was weighed on the table and said of it. */
+const tableSchema = z.object({
   scaleId: idSchema<"scale">(),
   /** When the piles were weighed. */
   occurredAt: instantSchema,
@@ -57,11 +63,19 @@ export const closeSortingSchema = z.object({
   /** The piles are heavier than the scale can explain, were weighed again, and it stays so. */
   confirmedAbove: z.boolean().default(false),
 });
+export type TableInput = z.output<typeof tableSchema>;
+
+export const closeSortingSchema = tableSchema.extend({
+  /** Made by the client; the id of the sorting, and of its draft where there is one. */
+  requestId: requestIdSchema,
+  /** The tags of the bags that were tipped, of any points. */
+  codes: z.array(codeSchema).min(1, "no-bags").max(MOST_BAGS, "too-many"),
+});
 export type CloseSortingInput = z.output<typeof closeSortingSchema>;
 
 export const sortingReceiptSchema = z.object({
   sortingId: idSchema<"sorting">(),
-  code: z.string(),
+  codes: z.array(z.string()),
   netGrams: z.number().int(),
   acceptedGrams: z.number().int(),
   rejectedGrams: z.number().int(),
@@ -86,7 +100,7 @@ export type SortingReceipt = z.output<typeof sortingReceiptSchema>;
 
 export const closeSortingEndpoint = endpoint({
   ...CLOSE_SORTING_ADDRESS,
-  summary: "Split one bag into piles and rejects.",
+  summary: "Split one bag, or several tipped together, into piles and rejects.",
   permission: "sorting.record",
   input: closeSortingSchema,
   output: sortingReceiptSchema,
@@ -104,10 +118,33 @@ export const undoSortingEndpoint = endpoint({
   input: undoSortingSchema,
   output: z.object({
     sortingId: idSchema<"sorting">(),
-    code: z.string(),
+    codes: z.array(z.string()),
     bagState: z.enum(BAG_STATES),
   }),
 });
+
+export const correctSortingEndpoint = endpoint({
+  ...CORRECT_SORTING_ADDRESS,
+  summary:
+    "Take a sorting back and say what should have stood there, as one act; it always goes through.",
+  permission: "sorting.correct",
+  input: z.object({
+    /** Made by the client; the id of the sorting that stands in its place. */
+    requestId: requestIdSchema,
+    id: idSchema<"sorting">(),
+    reason: reasonSchema,
+    /** null: the bags wait again. */
+    replacement: tableSchema.nullable(),
+  }),
+  output: z.object({
+    id: z.string(),
+    receipt: sortingReceiptSchema.nullable(),
+    codes: z.array(z.string()),
+    later: laterUsesSchema,
+  }),
+});
+export type CorrectSortingInput = z.output<(typeof correctSortingEndpoint)["input"]>;
+export type CorrectSortingReceipt = z.output<(typeof correctSortingEndpoint)["output"]>;
 
 export const waitingBagSchema = z.object({
   code: z.string(),

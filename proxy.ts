@@ -11,7 +11,12 @@ import { settings } from "@/lib/platform/env";
 export function proxy(request: NextRequest): NextResponse {
   const nonce = randomBytes(18).toString("base64");
   const requestId = randomUUID();
-  const policy = contentSecurityPolicy(nonce, process.env.NODE_ENV === "development");
+  const { publicUrl, storage } = settings();
+  const policy = contentSecurityPolicy(
+    nonce,
+    process.env.NODE_ENV === "development",
+    storage.browserSource,
+  );
 
   const forwarded = new Headers(request.headers);
   // Next puts the nonce on its own scripts when the request carries the policy.
@@ -24,13 +29,14 @@ export function proxy(request: NextRequest): NextResponse {
   response.headers.set("content-security-policy", policy);
   response.headers.set(REQUEST_ID_HEADER, requestId);
   for (const [name, value] of Object.entries(PAGE_HEADERS)) response.headers.set(name, value);
-  if (settings().publicUrl.startsWith("https:")) {
+  if (publicUrl.startsWith("https:")) {
     response.headers.set("strict-transport-security", STRICT_TRANSPORT);
   }
   return response;
 }
 
 export const config = {
-  // API answers set their own headers in route(); a proxy in front of them would copy every body.
-  matcher: ["/((?!api/|_next/static|_next/image).*)"],
+  // API answers set their own headers in route(); a proxy in front of them would copy every body. The scanner's
+  // worker has its own policy (next.config.mjs), which a page's would replace.
+  matcher: ["/((?!api/|_next/static|_next/image|scanner/).*)"],
 };

@@ -2,6 +2,7 @@
 import { createHash } from "node:crypto";
 import fs from "node:fs";
 import path from "node:path";
+import { buildScanner } from "./build-scanner.mjs";
 import { buildWorkers } from "./build-workers.mjs";
 import { runToEnd } from "./own-processes.mjs";
 
@@ -64,6 +65,8 @@ export function isBuilt(root) {
  * @returns {Promise<number>} the exit code of `next build`
  */
 export async function build(root, stdio = "inherit") {
+  // First, because Next serves it and the fingerprint counts it.
+  await buildScanner(root);
   const print = fingerprint(root);
   fs.rmSync(path.join(root, STAMP), { force: true });
   const env = { ...process.env, NODE_ENV: "production", NEXT_TELEMETRY_DISABLED: "1" };

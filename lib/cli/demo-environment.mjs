@@ -4,10 +4,11 @@
  */
 
 /**
- * @param {{ port: number, databaseFile: string, base: Readonly<Record<string, string | undefined>> }} demo
+ * @param {{ port: number, databaseFile: string, storage: Readonly<Record<string, string>>, base: Readonly<Record<string, string | undefined>> }} demo
+ *   storage: what storageEnvironment() of storage-process.mjs made
  * @returns {Record<string, string | undefined>} the environment of everything that the demo starts
  */
-export function demoEnvironment({ port, databaseFile, base }) {
+export function demoEnvironment({ port, databaseFile, storage, base }) {
   const url = `http://localhost:${port}`;
   return {
     ...base,
@@ -23,5 +24,6 @@ export function demoEnvironment({ port, databaseFile, base }) {
     MAIL_MODE: "folder",
     SMTP_URL: "",
     TRUSTED_PROXY: "0",
+    ...storage,
   };
 }

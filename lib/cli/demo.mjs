@@ -10,7 +10,8 @@ import { demoEnvironment } from "./demo-environment.mjs";
 import { takeLock } from "./demo-lock.mjs";
 import { installIfNeeded } from "./install.mjs";
 import { endAll, endWithSignals, isStopping, runToEnd, startProcess } from "./own-processes.mjs";
-import { choosePort, waitUntilHealthy } from "./ports.mjs";
+import { choosePort, tryPort, waitUntilHealthy } from "./ports.mjs";
+import { STORAGE_ARGS, storageEnvironment, waitUntilStoring } from "./storage-process.mjs";
 
 const ROOT = path.resolve(import.meta.dirname, "../..");
 /** Everything of the demo's: database, mail, pictures. */
@@ -28,10 +29,20 @@ async function runStep(entry, env, failure) {
   if (code !== 0 && !isStopping()) throw new Error(failure);
 }
 
+/** Everything that the demo starts gets these settings; the folder is that of the database. */
+function environmentIn(folder, port, storagePort) {
+  return demoEnvironment({
+    port,
+    base: process.env,
+    databaseFile: path.join(folder, DATABASE),
+    storage: storageEnvironment({ port: storagePort, folder: path.join(folder, "photos") }),
+  });
+}
+
 async function prepareDatabase(port) {
-  const base = process.env;
+  // Nothing stores a picture here; the settings are checked all the same.
   if (fs.existsSync(path.join(FOLDER, DATABASE))) {
-    const env = demoEnvironment({ port, base, databaseFile: path.join(FOLDER, DATABASE) });
+    const env = environmentIn(FOLDER, port, port);
     return runStep(
       "lib/cli/migrate.ts",
       env,
@@ -41,7 +52,7 @@ async function prepareDatabase(port) {
   say("Filling the demo's database: eight months of an invented scheme (about half a minute).");
   fs.rmSync(PARTIAL, { recursive: true, force: true });
   fs.mkdirSync(PARTIAL, { recursive: true });
-  const env = demoEnvironment({ port, base, databaseFile: path.join(PARTIAL, DATABASE) });
+  const env = environmentIn(PARTIAL, port, port);
   await runStep("lib/cli/migrate.ts", env, "The demo's database could not be made.");
   await runStep("lib/cli/seed-demo.ts", env, "The demo's database could not be filled.");
   if (isStopping()) return;
@@ -79,6 +90,31 @@ function announce(url, kept) {
   say(`  The server's log is in ${path.relative(ROOT, LOG)}. Ctrl-C ends the demo.`);
 }
 
+/** The program, and the stand-in for its picture storage; when one of them ends, the demo does. */
+async function startServers(port) {
+  const storagePort = (await tryPort(0)) ?? 0;
+  const env = environmentIn(FOLDER, port, storagePort);
+  const log = fs.openSync(LOG, "w");
+  const options = { cwd: ROOT, env, stdio: ["ignore", log, log] };
+  const listen = ["start", "-p", String(port), "-H", "127.0.0.1"];
+  const servers = [
+    startProcess(process.execPath, [NEXT_BIN, ...listen], options),
+    startProcess(process.execPath, STORAGE_ARGS, options),
+  ];
+  fs.closeSync(log);
+  let gone = false;
+  const ended = Promise.race(
+    servers.map((server) => new Promise((resolve) => server.once("exit", resolve))),
+  ).then(() => {
+    gone = true;
+  });
+  const answers = await Promise.all([
+    waitUntilHealthy(`http://127.0.0.1:${port}`, () => gone),
+    waitUntilStoring(storagePort, () => gone),
+  ]);
+  return { ended, healthy: answers.every(Boolean) };
+}
+
 async function main(args) {
   const unknown = args.find((arg) => arg !== "--fresh");
   if (unknown) throw new Error(`npm run demo knows --fresh, not ${unknown}.`);
@@ -96,26 +132,8 @@ async function main(args) {
     const url = `http://localhost:${port}`;
     lock.note({ url });
 
-    const log = fs.openSync(LOG, "w");
-    const databaseFile = path.join(FOLDER, DATABASE);
-    const server = startProcess(
-      process.execPath,
-      [NEXT_BIN, "start", "-p", String(port), "-H", "127.0.0.1"],
-      {
-        cwd: ROOT,
-        env: demoEnvironment({ port, base: process.env, databaseFile }),
-        stdio: ["ignore", log, log],
-      },
-    );
-    fs.closeSync(log);
-    let gone = false;
-    const ended = new Promise((resolve) => {
-      server.once("exit", () => {
-        gone = true;
-        resolve();
-      });
-    });
-    if (await waitUntilHealthy(`http://127.0.0.1:${port}`, () => gone)) announce(url, kept);
+    const { ended, healthy } = await startServers(port);
+    if (healthy) announce(url, kept);
     else if (!isStopping()) {
       console.error(fs.readFileSync(LOG, "utf8").split("\n").slice(-30).join("\n"));
       throw new Error(`The server did not answer at ${url}; the end of its log is above.`);

@@ -1,6 +1,7 @@
 /** `npm run db:migrate`, and the first step of every start: settings are checked, the database is brought up to date. */
 import { migrateDatabase } from "@/db/migrate";
-import { SettingsError, readSettings } from "@/lib/platform/env";
+import { readSettings } from "@/lib/platform/env";
+import { SettingsError } from "@/lib/platform/settings-error";
 
 try {
   const { databaseFile, mode } = readSettings(process.env);

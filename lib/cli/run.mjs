@@ -5,9 +5,12 @@
 import fs from "node:fs";
 import path from "node:path";
 import { NEXT_BIN, build, isBuilt } from "./build.mjs";
+import { buildScanner } from "./build-scanner.mjs";
 import { buildWorkers } from "./build-workers.mjs";
 import { installIfNeeded } from "./install.mjs";
-import { endAll, endWithSignals, isStopping, runToEnd } from "./own-processes.mjs";
+import { endAll, endWithSignals, isStopping, runToEnd, startProcess } from "./own-processes.mjs";
+import { tryPort } from "./ports.mjs";
+import { STORAGE_ARGS, storageEnvironment } from "./storage-process.mjs";
 
 const ROOT = path.resolve(import.meta.dirname, "../..");
 const ENTRIES = {
@@ -16,6 +19,7 @@ const ENTRIES = {
   "ledger-export": "lib/cli/ledger-export.ts",
   "set-up": "lib/cli/set-up.ts",
   backup: "lib/cli/backup.ts",
+  "photos-tidy": "lib/cli/photos-tidy.ts",
 };
 
 /** The same files in the same order as Next reads them; what is set already stays. */
@@ -32,13 +36,34 @@ function runEntry(entry, args, env = process.env) {
   return runToEnd(process.execPath, [...flags, entry, ...args], { cwd: ROOT, env });
 }
 
+/**
+ * Development gets the stand-in for the picture storage, unless the settings already name a storage.
+ *
+ * @returns {Promise<Record<string, string | undefined>>} the environment of the program
+ */
+async function withStorage(port) {
+  const { STORAGE_MODE, UPLOADTHING_TOKEN, DATABASE_FILE, PUBLIC_URL } = process.env;
+  if (STORAGE_MODE || UPLOADTHING_TOKEN) return process.env;
+  const database = path.resolve(ROOT, DATABASE_FILE || "data/bismar.db");
+  const folder = path.join(path.dirname(database), "photos");
+  const own = storageEnvironment({ port: (await tryPort(0)) ?? 0, folder });
+  const address = PUBLIC_URL || `http://localhost:${port}`;
+  const env = { ...process.env, PUBLIC_URL: address, ...own };
+  startProcess(process.execPath, STORAGE_ARGS, { cwd: ROOT, env });
+  return env;
+}
+
 async function dev(args) {
   loadEnvironment("development");
   const migrated = await runEntry(ENTRIES.migrate, []);
   if (migrated !== 0) return migrated;
-  await buildWorkers(ROOT);
+  await Promise.all([buildScanner(ROOT), buildWorkers(ROOT)]);
   const port = process.env.PORT ?? "3000";
-  return runToEnd(process.execPath, [NEXT_BIN, "dev", "-p", port, ...args], { cwd: ROOT });
+  const env = await withStorage(port);
+  const next = [NEXT_BIN, "dev", "-p", port, ...args];
+  const code = await runToEnd(process.execPath, next, { cwd: ROOT, env });
+  if (!isStopping()) await endAll();
+  return code;
 }
 
 /** The production start: settings are checked and the database is migrated before anything listens. */

@@ -41,6 +41,7 @@ export const PERMISSIONS = {
   "reports.export": COORDINATOR,
   "ledger.verify": COORDINATOR,
   "people.manage": COORDINATOR,
+  "audit.read": COORDINATOR,
   "settings.manage": COORDINATOR,
 } as const satisfies Record<string, readonly Role[]>;
 

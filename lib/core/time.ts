@@ -61,6 +61,20 @@ export function middayOf(of: Day, zone: string): Instant {
     : ((noon - HALF_DAY_MS) as Instant);
 }
 
+/**
+ * First instant of a day. Found by halving, because days of a zone may have 23 or 25 hours.
+ */
+export function startOfDay(of: Day, zone: string): Instant {
+  let inside: number = middayOf(of, zone);
+  let before = inside - 26 * 3_600_000;
+  while (inside - before > 1) {
+    const middle = Math.floor((before + inside) / 2);
+    if (dayOf(middle as Instant, zone) === of) inside = middle;
+    else before = middle;
+  }
+  return inside as Instant;
+}
+
 /** Does the runtime know this IANA zone? */
 export function isZone(zone: string): boolean {
   try {

@@ -25,23 +25,29 @@ export const PAGE_HEADERS = {
 } as const;
 
 /**
- * The policy of a page. Scripts run by nonce and by what they load themselves; WebAssembly is the
- * scanner's. Inline style attributes are allowed because widths and colours of data are set that way.
+ * The policy of a page. Scripts run by nonce and by what they load themselves; WebAssembly is left to the
+ * scanner's worker, whose own answer allows it. Inline style attributes are allowed because widths and
+ * colours of data are set that way.
  *
  * @param nonce fresh for each answer
  * @param development the dev server evaluates code and reloads through a socket
+ * @param storage where a page sends its pictures to, as a source of connect-src
  */
-export function contentSecurityPolicy(nonce: string, development: boolean): string {
+export function contentSecurityPolicy(
+  nonce: string,
+  development: boolean,
+  storage: string,
+): string {
   return [
     "default-src 'self'",
-    `script-src 'self' 'nonce-${nonce}' 'strict-dynamic' 'wasm-unsafe-eval'${development ? " 'unsafe-eval'" : ""}`,
+    `script-src 'self' 'nonce-${nonce}' 'strict-dynamic'${development ? " 'unsafe-eval'" : ""}`,
     development ? "style-src 'self' 'unsafe-inline'" : `style-src 'self' 'nonce-${nonce}'`,
     "style-src-attr 'unsafe-inline'",
     "img-src 'self' blob: data:",
     "media-src 'self' blob:",
     "font-src 'self'",
-    `connect-src 'self'${development ? " ws: wss:" : ""}`,
-    "worker-src 'self' blob:",
+    `connect-src 'self' ${storage}${development ? " ws: wss:" : ""}`,
+    "worker-src 'self'",
     "manifest-src 'self'",
     "object-src 'none'",
     "base-uri 'none'",

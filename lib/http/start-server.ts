@@ -1,18 +1,25 @@
 /** What happens once when the server starts: settings are checked, jobs begin. */
 import "server-only";
+import { randomUUID } from "node:crypto";
 import { tidyIdentity } from "@/lib/identity/commands/tidy";
 import { verifyNow } from "@/lib/ledger/commands/verify";
 import { deliverDueMail, isMailDue } from "@/lib/mail/commands/deliver";
 import { mailTransport } from "@/lib/mail/commands/transport";
 import { now } from "@/lib/platform/clock";
+import type { Context } from "@/lib/platform/context";
 import { database } from "@/lib/platform/database";
-import { settings, SettingsError, type Settings } from "@/lib/platform/env";
+import { settings, type Settings } from "@/lib/platform/env";
 import { repeat, underLease } from "@/lib/platform/jobs";
 import { log } from "@/lib/platform/logger";
+import { SettingsError } from "@/lib/platform/settings-error";
+import { storage } from "@/lib/platform/storage";
+import { closeOldLots } from "@/lib/stock/commands/close-lot";
+import { tidyPhotos } from "@/lib/uploads/commands/tidy";
 
 const SECOND = 1000;
 const MINUTE = 60 * SECOND;
 const HOUR = 60 * MINUTE;
+const DAY = 24 * HOUR;
 
 /** Five mails, each up to 40 seconds with a server that hangs, and some to spare. */
 const MAIL_LEASE_MS = 5 * MINUTE;
@@ -41,6 +48,47 @@ function startTidying(): void {
   });
 }
 
+/** Once a day, the first time an hour after the start; when the storage does not answer, again in an hour. */
+function startTidyingPhotos(): void {
+  let due = 0;
+  repeat("tidy-photos", HOUR, async () => {
+    const db = database();
+    if (now() < due) return;
+    await underLease(db, "tidy-photos", HOUR, now, async () => {
+      const ctx: Context = {
+        actor: { kind: "system" },
+        now: now(),
+        requestId: randomUUID(),
+        bodyHash: "",
+        address: null,
+        db,
+      };
+      const done = await tidyPhotos(ctx, storage());
+      log.info("photos-tidied", done);
+      return JSON.stringify(done);
+    });
+    due = now() + DAY - MINUTE;
+  });
+}
+
+/** Lots that have been open for the scheme's set weeks; who asks for one earlier finds it closed as well. */
+function startClosingOldLots(): void {
+  repeat("close-old-lots", HOUR, async () => {
+    const db = database();
+    await underLease(db, "close-old-lots", MINUTE, now, () => {
+      const closed = closeOldLots({
+        actor: { kind: "system" },
+        now: now(),
+        requestId: randomUUID(),
+        bodyHash: "",
+        address: null,
+        db,
+      });
+      return Promise.resolve(`closed ${closed}`);
+    });
+  });
+}
+
 /** The whole ledger, soon after the start and then once a day; in a thread, so no request waits for it. */
 function startVerifying(): void {
   const verify = async (): Promise<void> => {
@@ -49,7 +97,7 @@ function startVerifying(): void {
   setTimeout(() => {
     verify().catch((error: unknown) => log.error("job-failed", error, { job: "ledger-verify" }));
   }, 10 * SECOND).unref();
-  repeat("ledger-verify", 24 * HOUR, verify);
+  repeat("ledger-verify", DAY, verify);
 }
 
 /**
@@ -67,6 +115,12 @@ export function startServer(): void {
   }
   startMail(found);
   startTidying();
+  startTidyingPhotos();
+  startClosingOldLots();
   if (found.mode === "production" || found.mode === "demo") startVerifying();
-  log.info("started", { mode: found.mode, mail: found.mail.mode });
+  log.info("started", {
+    mode: found.mode,
+    mail: found.mail.mode,
+    storage: found.storage.mode,
+  });
 }

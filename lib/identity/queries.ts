@@ -33,6 +33,17 @@ export function findSessionRole(
   return row ? row.role : null;
 }
 
+/**
+ * The role of a person without a session: for what was begun in one and is finished by the program.
+ *
+ * @returns null when the person was removed
+ */
+export function findPersonRole(db: Readable, personId: PersonId): Role | null {
+  return (prepared(db.client, "select role from people where id = ? and removed_at is null")
+    .pluck()
+    .get(personId) ?? null) as Role | null;
+}
+
 /** The signed-in person's own account. */
 export function getAccount(ctx: Context): AccountView {
   allow(ctx, "account.own");

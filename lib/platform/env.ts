@@ -4,11 +4,11 @@
  */
 import path from "node:path";
 import * as z from "zod";
+import { isLoopback, SettingsError } from "./settings-error";
+import { readStorageSettings, type StorageSettings } from "./storage-settings";
 
 /** The secret that `npm run demo` uses; a production start refuses it. */
 export const DEMO_SECRET = "demo-secret-not-for-production-0000";
-
-const LOOPBACK = new Set(["localhost", "127.0.0.1", "[::1]"]);
 
 const schema = z.object({
   NODE_ENV: z.enum(["development", "production", "test"]).default("development"),
@@ -30,11 +30,9 @@ export type Settings = {
   secret: string;
   mail:
     { mode: "smtp"; url: string; from: string } | { mode: "folder"; folder: string; from: string };
+  storage: StorageSettings;
   trustedProxies: number;
 };
-
-/** Thrown at start; the message names the variable and what to do. */
-export class SettingsError extends Error {}
 
 /**
  * @param env usually process.env
@@ -65,7 +63,7 @@ export function readSettings(env: Readonly<Record<string, string | undefined>>):
       "NEXTAUTH_SECRET is the demo's. Make your own, at least 32 random characters.",
     );
   }
-  const loopback = LOOPBACK.has(new URL(publicUrl).hostname);
+  const loopback = isLoopback(new URL(publicUrl));
   const mailMode = raw.MAIL_MODE ?? (raw.SMTP_URL || !loopback ? "smtp" : "folder");
   if (mailMode === "folder" && !loopback) {
     throw new SettingsError(
@@ -93,6 +91,7 @@ export function readSettings(env: Readonly<Record<string, string | undefined>>):
       mailMode === "smtp"
         ? { mode: "smtp", url: raw.SMTP_URL ?? "", from: raw.MAIL_FROM }
         : { mode: "folder", folder: path.join(dataFolder, "mail"), from: raw.MAIL_FROM },
+    storage: readStorageSettings(env, { production: mode === "production", loopback }),
     trustedProxies: raw.TRUSTED_PROXY,
   };
 }

@@ -35,6 +35,8 @@ export const uploadedSchema = z.union([
   z.object({ ok: z.literal(false), reason: z.string() }),
 ]);
 
+export type Uploaded = z.output<typeof uploadedSchema>;
+
 export const listPhotosEndpoint = endpoint({
   method: "GET",
   path: "/api/photos",

@@ -26,3 +26,5 @@ export const MOST_PHOTO_PIXELS = 50_000_000;
 export const PHOTO_TYPES = ["image/jpeg", "image/png", "image/webp"] as const;
 /** After so long a photo that nothing refers to is cleaned up. */
 export const UNREFERRED_MILLISECONDS = 24 * 60 * 60 * 1000;
+/** The name under which the storage's protocol knows our one way to send. */
+export const PHOTO_ROUTE = "photo";

@@ -12,9 +12,11 @@ import Database from "better-sqlite3";
 import { encode } from "next-auth/jwt";
 import { NEXT_BIN, fingerprint } from "@/lib/cli/build.mjs";
 import { tryPort, waitUntilHealthy } from "@/lib/cli/ports.mjs";
+import { storageEnvironment } from "@/lib/cli/storage-process.mjs";
 import { newId, type PersonId } from "@/lib/core/ids";
 import type { Role } from "@/lib/core/permissions";
 import { SESSION_MS, sessionCookieName } from "@/lib/identity/terms";
+import { endProcess, storageProcess, type StorageProcess } from "./storage-process";
 
 const ROOT = path.resolve(import.meta.dirname, "../..");
 const KEPT = path.join(ROOT, ".cache/e2e");
@@ -35,6 +37,8 @@ export type E2eServer = {
   session: (role: Role) => Promise<{ id: string; cookie: { name: string; value: string } }>;
   /** Signs a browser in as a role. */
   signIn: (context: BrowserContext, role: Role) => Promise<void>;
+  /** The stand-in for the picture storage; not started until a test asks for it, ended with the server. */
+  storage: StorageProcess;
   /** Everything that the server has logged. */
   log: () => string;
   /** Ends the server and leaves it ended until start(): "the server is gone". */
@@ -63,13 +67,6 @@ function template(what: StartingPoint): string {
   return file;
 }
 
-function ended(child: ChildProcess): Promise<void> {
-  if (child.exitCode !== null || child.signalCode !== null) return Promise.resolve();
-  return new Promise((resolve) => {
-    child.once("exit", () => resolve());
-  });
-}
-
 /**
  * Starts the program. Call it in `beforeAll` and `close()` in `afterAll`.
  *
@@ -85,9 +82,14 @@ export async function startE2eServer(
   const databaseFile = path.join(folder, "bismar.db");
   const logFile = path.join(folder, "server.log");
   fs.copyFileSync(typeof from === "string" ? template(from) : from.file, databaseFile);
-  const port = await tryPort(0);
-  if (port === null) throw new Error("No port is free.");
+  const [port, storagePort] = await Promise.all([tryPort(0), tryPort(0)]);
+  if (port === null || storagePort === null) throw new Error("No port is free.");
   const url = `http://localhost:${port}`;
+  const storageSettings = storageEnvironment({
+    port: storagePort,
+    folder: path.join(folder, "photos"),
+  });
+  const storage = storageProcess(storageSettings, url);
   const secret = randomBytes(32).toString("hex");
   const cookieName = sessionCookieName(false);
   let child: ChildProcess | undefined;
@@ -115,6 +117,7 @@ export async function startE2eServer(
           NEXTAUTH_SECRET: secret,
           MAIL_MODE: "folder",
           SMTP_URL: "",
+          ...storageSettings,
           ...environment,
         },
       },
@@ -131,11 +134,7 @@ export async function startE2eServer(
 
   const stop = async (): Promise<void> => {
     if (!child) return;
-    const ending = child;
-    ending.kill("SIGTERM");
-    const tooLong = setTimeout(() => ending.kill("SIGKILL"), 5000);
-    await ended(ending);
-    clearTimeout(tooLong);
+    await endProcess(child);
     child = undefined;
   };
 
@@ -188,6 +187,7 @@ export async function startE2eServer(
     folder,
     query,
     session,
+    storage,
     signIn: async (context, role) => {
       const { cookie } = await session(role);
       await context.addCookies([{ ...cookie, url, httpOnly: true, sameSite: "Lax" }]);
@@ -196,6 +196,7 @@ export async function startE2eServer(
     stop,
     start,
     close: async () => {
+      await storage.stop();
       await stop();
       process.off("exit", endWithThis);
       fs.rmSync(folder, { recursive: true, force: true });

@@ -8,7 +8,7 @@ export const LOGS = path.join(ROOT, ".cache/logs");
 
 /** Settings of the shell must not leak into what is tested. */
 const OURS =
-  /^(BISMAR_|NEXTAUTH_|MAIL_|SMTP_|VITEST|PLAYWRIGHT_)|^(DATABASE_FILE|PUBLIC_URL|PORT|HOST|NODE_ENV|TRUSTED_PROXY)$/;
+  /^(BISMAR_|NEXTAUTH_|MAIL_|SMTP_|STORAGE_|UPLOADTHING_|VITEST|PLAYWRIGHT_)|^(DATABASE_FILE|PUBLIC_URL|PORT|HOST|NODE_ENV|TRUSTED_PROXY)$/;
 
 export function cleanEnvironment(extra = {}) {
   const kept = Object.entries(process.env).filter(([name]) => !OURS.test(name));

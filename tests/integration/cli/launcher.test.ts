@@ -7,7 +7,11 @@ import { pathToFileURL } from "node:url";
 import { afterEach, describe, expect, it } from "vitest";
 
 const ROOT = path.resolve(import.meta.dirname, "../../..");
-const OURS = /^(BISMAR_|NEXTAUTH_|MAIL_|SMTP_|DATABASE_FILE$|PUBLIC_URL$|PORT$|NODE_ENV$)/;
+const OURS =
+  /^(BISMAR_|NEXTAUTH_|MAIL_|SMTP_|STORAGE_|UPLOADTHING_|DATABASE_FILE$|PUBLIC_URL$|PORT$|NODE_ENV$)/;
+const hostedToken = Buffer.from(
+  JSON.stringify({ apiKey: "sk_live_of_this_test", appId: "test", regions: ["sea1"] }),
+).toString("base64");
 const folders: string[] = [];
 
 function newFolder(): string {
@@ -39,6 +43,7 @@ describe("npm start", () => {
     PUBLIC_URL: "https://shed.example",
     NEXTAUTH_SECRET: "a-secret-of-this-test-alone-0123456789",
     SMTP_URL: "smtp://127.0.0.1:1",
+    UPLOADTHING_TOKEN: hostedToken,
   };
 
   it.each([
@@ -57,6 +62,13 @@ describe("npm start", () => {
     ],
     ["no mail server", { SMTP_URL: "" }, "SMTP_URL"],
     ["mail to a folder", { MAIL_MODE: "folder", SMTP_URL: "" }, "MAIL_MODE"],
+    ["no picture storage", { UPLOADTHING_TOKEN: "" }, "UPLOADTHING_TOKEN"],
+    ["the picture storage's stand-in", { STORAGE_MODE: "fake" }, "STORAGE_MODE"],
+    [
+      "the stand-in's address",
+      { UPLOADTHING_API_URL: "http://localhost:4151" },
+      "UPLOADTHING_API_URL",
+    ],
   ])(
     "with %s is refused by the variable's name, and touches no database",
     async (_what, wrong, variable) => {

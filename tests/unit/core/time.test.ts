@@ -15,7 +15,9 @@ import {
   monthsAndDays,
   nextMonth,
   readDay,
+  startOfDay,
   type Day,
+  type Instant,
 } from "@/lib/core/time";
 
 const FIRST = day("2019-01-01");
@@ -162,5 +164,22 @@ describe("showing time", () => {
   it("takes whole milliseconds only", () => {
     expect(() => instant(0.5)).toThrow(RangeError);
     expect(() => instant(NaN)).toThrow(RangeError);
+  });
+
+  it("finds the first instant of the day, also where the clock changes", () => {
+    fc.assert(
+      fc.property(
+        fc.integer({ min: Date.UTC(2026, 0, 1), max: Date.UTC(2027, 0, 1) }),
+        fc.constantFrom("UTC", "Europe/London", "Australia/Lord_Howe", "America/St_Johns"),
+        (at, zone) => {
+          const start = startOfDay(dayOf(at as Instant, zone), zone);
+          expect(start).toBeLessThanOrEqual(at);
+          expect(dayOf(start, zone)).toBe(dayOf(at as Instant, zone));
+          expect(dayOf((start - 1) as Instant, zone)).not.toBe(dayOf(at as Instant, zone));
+        },
+      ),
+    );
+    // 25 October 2026: the day has 25 hours in London and begins at 23:00 UTC of the 24th.
+    expect(startOfDay(day("2026-10-25"), "Europe/London")).toBe(Date.UTC(2026, 9, 24, 23));
   });
 });

@@ -20,6 +20,7 @@ export const auditEvents = sqliteTable(
   (t) => [
     wholeNumbers("audit_events_whole_numbers", t.at, t.actId),
     index("audit_events_subject").on(t.subjectKind, t.subjectId),
+    index("audit_events_at").on(t.at),
   ],
 );
 

@@ -1,7 +1,7 @@
 /** Closed lists of photos. */
 
 /** What a photo can belong to. A later step adds its own; `lib/uploads/queries/subjects.ts` says how each is found. */
-export const PHOTO_SUBJECTS = ["weigh-in", "lot"] as const;
+export const PHOTO_SUBJECTS = ["weigh-in", "lot", "sorting", "step", "count", "removal"] as const;
 export type PhotoSubject = (typeof PHOTO_SUBJECTS)[number];
 
 /** A chip photo shows a lot's flake or a moulded chip by itself, and its colour is measured; a lot has one at most. */

@@ -6,7 +6,18 @@ import "server-only";
 import { prepared, type Readable } from "@/lib/platform/database";
 import { PHOTO_SUBJECTS, type PhotoSubject } from "../terms";
 
-const TABLES: Readonly<Record<PhotoSubject, string>> = { "weigh-in": "weigh_ins", lot: "lots" };
+/** A session that was put aside is there: its photos wait with it. */
+const SORTINGS =
+  "(select id from sorting_sessions union all select id from sorting_drafts where state <> 'given-up')";
+
+const TABLES: Readonly<Record<PhotoSubject, string>> = {
+  "weigh-in": "weigh_ins",
+  lot: "lots",
+  sorting: SORTINGS,
+  step: "steps",
+  count: "counts",
+  removal: "removals",
+};
 
 /** Is there such a record? */
 export function subjectExists(db: Readable, kind: PhotoSubject, id: string): boolean {

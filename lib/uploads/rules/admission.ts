@@ -13,7 +13,14 @@ import {
 } from "../terms";
 
 /** A weigh-in's id is made by the phone, so its pictures may come before it. */
-const MAY_COME_LATER: Readonly<Record<PhotoSubject, boolean>> = { "weigh-in": true, lot: false };
+const MAY_COME_LATER: Readonly<Record<PhotoSubject, boolean>> = {
+  "weigh-in": true,
+  lot: false,
+  sorting: true,
+  step: true,
+  count: true,
+  removal: true,
+};
 
 /**
  * May a picture be added to a subject?

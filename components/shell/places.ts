@@ -7,6 +7,7 @@ export type PlaceId =
   | "weigh-in"
   | "sorting"
   | "stock"
+  | "removals"
   | "reports"
   | "points"
   | "tags"
@@ -14,6 +15,7 @@ export type PlaceId =
   | "palette"
   | "people"
   | "audit"
+  | "settings"
   | "account";
 
 export type Place = { id: PlaceId; label: string; href: Route };
@@ -25,13 +27,15 @@ const ENTRIES: readonly Entry[] = [
   { id: "weigh-in", label: "Weigh-in", href: "/weigh-in", permission: "weighing.record" },
   { id: "sorting", label: "Sorting", href: "/sorting", permission: "sorting.record" },
   { id: "stock", label: "Stock", href: "/stock", permission: "stock.read" },
+  { id: "removals", label: "Taken away", href: "/removals", permission: "removals.read" },
   { id: "reports", label: "Reports", href: "/reports", permission: "reports.read" },
   { id: "points", label: "Drop-off points", href: "/points/manage", permission: "points.manage" },
   { id: "tags", label: "Tags", href: "/tags", permission: "tags.order" },
-  { id: "scales", label: "Scales", href: "/scales", permission: "scales.manage" },
+  { id: "scales", label: "Scales", href: "/scales", permission: "scales.read" },
   { id: "palette", label: "Palette", href: "/palette", permission: "palette.manage" },
   { id: "people", label: "People", href: "/people", permission: "people.manage" },
-  { id: "audit", label: "Audit", href: "/audit/ledger", permission: "ledger.verify" },
+  { id: "audit", label: "Audit", href: "/audit", permission: "audit.read" },
+  { id: "settings", label: "Settings", href: "/settings", permission: "settings.manage" },
   { id: "account", label: "Account", href: "/account", permission: "account.own" },
 ];
 

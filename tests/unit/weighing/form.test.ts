@@ -21,9 +21,10 @@ import { giveSpareTagEndpoint } from "@/lib/bags/contract";
 import { newId } from "@/lib/core/ids";
 import { instant } from "@/lib/core/time";
 import { listPointsEndpoint } from "@/lib/points/contract";
-import { listContainersEndpoint, listScalesEndpoint } from "@/lib/scales/contract";
+import { listContainersEndpoint } from "@/lib/scales/contract/containers";
+import { listScalesEndpoint } from "@/lib/scales/contract/scales";
 import { listColoursEndpoint } from "@/lib/stock/contract/palette";
-import { weighInInputSchema } from "@/lib/weighing/contract";
+import { weighInInputSchema } from "@/lib/weighing/contract/weigh-ins";
 import type { NamedScale } from "@/lib/scales/rules/reading";
 
 const SCALE: NamedScale = {

@@ -20,7 +20,6 @@ import {
   missingOfMaterial,
   openQuestions,
   refuseTime,
-  startOfDay,
   usualBag,
   whenWords,
 } from "@/lib/weighing/rules";
@@ -204,25 +203,6 @@ describe("time", () => {
   it("closes undo after ten minutes from recording", () => {
     expect(mayStillUndo(NOON, instant(NOON + 600_000))).toBe(true);
     expect(mayStillUndo(NOON, instant(NOON + 600_001))).toBe(false);
-  });
-
-  it("finds the first instant of the day, also where the clock changes", () => {
-    fc.assert(
-      fc.property(
-        fc.integer({ min: Date.UTC(2026, 0, 1), max: Date.UTC(2027, 0, 1) }),
-        fc.constantFrom("UTC", "Europe/London", "Australia/Lord_Howe", "America/St_Johns"),
-        (at, zone) => {
-          const start = startOfDay(at as Instant, zone);
-          expect(start).toBeLessThanOrEqual(at);
-          expect(dayOf(start, zone)).toBe(dayOf(at as Instant, zone));
-          expect(dayOf((start - 1) as Instant, zone)).not.toBe(dayOf(at as Instant, zone));
-        },
-      ),
-    );
-    // 25 October 2026: the day has 25 hours in London and begins at 23:00 UTC of the 24th.
-    expect(startOfDay(instant(Date.UTC(2026, 9, 25, 22)), "Europe/London")).toBe(
-      Date.UTC(2026, 9, 24, 23),
-    );
   });
 
   it("says when, in the scheme's zone", () => {

@@ -6,6 +6,7 @@ import { closeSorting } from "@/lib/sorting/commands/close";
 import { undoWeighIn } from "@/lib/weighing/commands/undo-weigh-in";
 import { weighBag } from "@/lib/weighing/commands/weigh-bag";
 import type { Cast, Shed, Tools } from "./cast";
+import { checkScales, workshopDay, type Works } from "./workshop";
 import { MATERIALS, REJECTS, type StoryMaterial } from "./story";
 
 export type Waiting = { code: LabelCode; netGrams: number; shed: Shed; sortOn: Day };
@@ -29,11 +30,20 @@ function season(day: Day, summer: number): number {
 }
 
 /** Runs the story to its last moment. @returns bags that wait for sorting then */
-export function fillShed(cast: Cast, sheds: readonly Shed[], tools: Tools, span: Span): Waiting[] {
+export function fillShed(
+  cast: Cast,
+  sheds: readonly Shed[],
+  tools: Tools,
+  works: Works,
+  span: Span,
+): Waiting[] {
   let waiting: Waiting[] = [];
   const lastDay = dayOf(span.now, span.timeZone);
   for (let day = span.firstDay; day <= lastDay; day = addDays(day, 1)) {
     const today = day === lastDay;
+    const opening = at(day, 8, 40);
+    const atWork = [...COLLECTING, ...SORTING].includes(weekday(day)) || today;
+    if (atWork && opening < span.now) checkScales(cast, works, opening);
     // On its last day the shed is at work whatever the weekday, so that Today has something to show.
     if (COLLECTING.includes(weekday(day)) || today) {
       waiting.push(...collect(cast, sheds, tools, day, span, today));
@@ -41,6 +51,7 @@ export function fillShed(cast: Cast, sheds: readonly Shed[], tools: Tools, span:
     if (SORTING.includes(weekday(day)) || today) {
       waiting = sortDue(cast, waiting, tools, day, span);
     }
+    workshopDay(cast, tools, works, day, span.now);
   }
   return waiting;
 }
@@ -149,21 +160,30 @@ function sortDue(
 ): Waiting[] {
   const left: Waiting[] = [];
   let minute = 13 * 60 + cast.random.int(20);
+  let table: Waiting[] = [];
   for (const bag of waiting) {
     const when = at(day, 0, minute);
     if (bag.sortOn > day || when >= span.now) {
       left.push(bag);
       continue;
     }
+    table.push(bag);
+    // Mostly one bag alone; now and then a few of them are tipped together.
+    if (table.length < 4 && cast.random.chance(0.16)) continue;
     minute += 3 + cast.random.int(4);
-    sort(cast, bag, tools, when);
+    sort(cast, table, tools, when);
+    table = [];
   }
+  left.push(...table);
   return left;
 }
 
-/** Splits a bag's net over what is usual in a bag, rejects included, as read on the scale in its steps. */
-function sort(cast: Cast, bag: Waiting, tools: Tools, when: Instant): void {
+/** Splits what was tipped over what is usual in a bag, rejects included, as read on the scale in its steps. */
+function sort(cast: Cast, bags: readonly Waiting[], tools: Tools, when: Instant): void {
+  const [first] = bags;
+  if (!first) return;
   const { random } = cast;
+  const bag = { ...first, netGrams: bags.reduce((sum, { netGrams }) => sum + netGrams, 0) };
   const wet = random.chance(0.04);
   const missing = wet ? bag.netGrams * (0.01 + random.next() * 0.02) : random.normal(0, 3);
   const rejectShare = Math.max(0, random.normal(bag.shed.story.rejectShare, 0.03));
@@ -187,7 +207,7 @@ function sort(cast: Cast, bag: Waiting, tools: Tools, when: Instant): void {
   const ctx = cast.as(random.pick(cast.volunteers), "volunteer", instant(when + 60_000));
   const input = {
     requestId: cast.requestId(ctx.now),
-    codes: [bag.code],
+    codes: bags.map(({ code }) => code),
     scaleId: tools.bench,
     occurredAt: when,
     piles: materials.map((material, index) => ({

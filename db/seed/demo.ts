@@ -20,7 +20,9 @@ import { setLotPlace } from "@/lib/stock/commands/place";
 import type { Cast, Shed, Tools } from "./cast";
 import { fillShed, type Waiting } from "./days";
 import { seeded } from "./random";
+import { mend } from "./mending";
 import signIns from "./sign-ins.json";
+import { equip } from "./workshop";
 import { MORE_VOLUNTEERS, NAMES, POINTS, SCALES, SCHEME, TARES } from "./story";
 
 const MONTHS_IN_DAYS = 243;
@@ -79,11 +81,13 @@ export async function seedDemo(
   const coordinator = cast.as(cast.coordinator, "coordinator", start);
   const sheds = addPoints(cast, coordinator);
   const tools = addTools(cast, coordinator);
-  const waiting: Waiting[] = fillShed(cast, sheds, tools, {
+  const works = equip(cast, tools, firstDay, start);
+  const waiting: Waiting[] = fillShed(cast, sheds, tools, works, {
     firstDay,
     now,
     timeZone: SCHEME.timeZone,
   });
+  mend(cast, tools, sheds, now);
   placeLots(cast, now);
 
   const count = (sql: string): number => db.reader.client.prepare(sql).pluck().get() as number;

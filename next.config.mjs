@@ -1,3 +1,18 @@
+/**
+ * The scanner's worker alone may compile WebAssembly: a worker obeys the policy of its own answer, so no page
+ * has to allow it. It loads nothing but the WebAssembly beside it.
+ */
+export const SCANNER_HEADERS = [
+  {
+    key: "content-security-policy",
+    value:
+      "default-src 'none'; script-src 'self' 'wasm-unsafe-eval'; connect-src 'self'; frame-ancestors 'none'",
+  },
+  { key: "x-content-type-options", value: "nosniff" },
+  { key: "referrer-policy", value: "same-origin" },
+  { key: "cross-origin-resource-policy", value: "same-origin" },
+];
+
 /** @type {import('next').NextConfig} */
 const config = {
   typedRoutes: true,
@@ -8,6 +23,9 @@ const config = {
   // `npm run verify` checks types, of the tests too; a build does not do it a second time.
   typescript: { ignoreBuildErrors: true },
   experimental: { authInterrupts: true },
+  async headers() {
+    return [{ source: "/scanner/:file*", headers: SCANNER_HEADERS }];
+  },
   async rewrites() {
     // The QR on a tag is all capitals (it keeps the symbol small); a redirect here would loop.
     return { beforeFiles: [{ source: "/B/:code", destination: "/b/:code" }] };

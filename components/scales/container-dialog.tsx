@@ -15,7 +15,7 @@ import {
   addContainerSchema,
   changeContainerEndpoint,
   type ContainerReceipt,
-} from "@/lib/scales/contract";
+} from "@/lib/scales/contract/containers";
 import { TARE_KIND_NAMES, TARE_KINDS } from "@/lib/scales/terms";
 import { MassInput } from "./mass-input";
 

@@ -14,16 +14,28 @@ import {
   restoreContainerEndpoint,
   retireContainerEndpoint,
   type ContainerReceipt,
-} from "@/lib/scales/contract";
+} from "@/lib/scales/contract/containers";
+import type { ScaleReceipt } from "@/lib/scales/contract/scales";
+import type { Tare } from "@/lib/scales/queries/tares";
 import { TARE_KIND_NAMES } from "@/lib/scales/terms";
 import { ContainerDialog } from "./container-dialog";
 import { ListSection } from "./list-section";
 import { RowActions } from "./row-actions";
+import { TareDialog } from "./tare-dialog";
+
+type Props = {
+  containers: readonly ContainerReceipt[];
+  /** What each weighed when, newest first. */
+  tares: ReadonlyMap<string, readonly Tare[]>;
+  scales: readonly ScaleReceipt[];
+  timeZone: string;
+};
 
 /** Containers and sacks whose empty weight is taken off at the scale. */
-export function ContainersSection({ containers }: { containers: readonly ContainerReceipt[] }) {
+export function ContainersSection({ containers, tares, scales, timeZone }: Props) {
   const router = useRouter();
   const [editing, setEditing] = useState<ContainerReceipt | "new" | null>(null);
+  const [weighing, setWeighing] = useState<ContainerReceipt | null>(null);
   const retire = useCommand(retireContainerEndpoint);
   const restore = useCommand(restoreContainerEndpoint);
   const setRetired = async (container: ContainerReceipt, retired: boolean) => {
@@ -59,7 +71,16 @@ export function ContainersSection({ containers }: { containers: readonly Contain
           busy={retire.pending || restore.pending}
           onChange={() => setEditing(one)}
           onRetire={(retired) => void setRetired(one, retired)}
-        />
+        >
+          <Button
+            variant="link"
+            size="small"
+            aria-label={`Weigh ${one.name} again`}
+            onClick={() => setWeighing(one)}
+          >
+            Weigh again
+          </Button>
+        </RowActions>
       ),
     },
   ];
@@ -98,6 +119,19 @@ export function ContainersSection({ containers }: { containers: readonly Contain
           </EmptyState>
         }
       />
+      {weighing ? (
+        <TareDialog
+          container={weighing}
+          tares={tares.get(weighing.id) ?? []}
+          scales={scales.filter(({ retiredAt }) => retiredAt === null)}
+          timeZone={timeZone}
+          onClose={() => setWeighing(null)}
+          onSaved={() => {
+            setWeighing(null);
+            router.refresh();
+          }}
+        />
+      ) : null}
       {editing === null ? null : (
         <ContainerDialog
           container={editing === "new" ? null : editing}

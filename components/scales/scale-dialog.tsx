@@ -15,7 +15,7 @@ import {
   changeScaleEndpoint,
   scaleDataSchema,
   type ScaleReceipt,
-} from "@/lib/scales/contract";
+} from "@/lib/scales/contract/scales";
 import { SCALE_CLASS_NAMES, SCALE_CLASSES } from "@/lib/scales/terms";
 import { MassInput } from "./mass-input";
 import { ScaleFacts } from "./scale-facts";

@@ -5,7 +5,7 @@ import type * as z from "zod";
 import { Notice } from "@/components/ui/notice";
 import { formatStep } from "@/lib/core/mass";
 import { sentence } from "@/lib/core/messages";
-import { scaleDataSchema } from "@/lib/scales/contract";
+import { scaleDataSchema } from "@/lib/scales/contract/scales";
 import {
   checkScale,
   minimumCapacity,

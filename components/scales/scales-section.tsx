@@ -12,7 +12,7 @@ import {
   restoreScaleEndpoint,
   retireScaleEndpoint,
   type ScaleReceipt,
-} from "@/lib/scales/contract";
+} from "@/lib/scales/contract/scales";
 import { SCALE_CLASS_NAMES } from "@/lib/scales/terms";
 import { ListSection } from "./list-section";
 import { RowActions } from "./row-actions";

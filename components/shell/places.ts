@@ -7,6 +7,8 @@ export type PlaceId =
   | "weigh-in"
   | "sorting"
   | "stock"
+  | "steps"
+  | "counts"
   | "removals"
   | "reports"
   | "points"
@@ -27,6 +29,8 @@ const ENTRIES: readonly Entry[] = [
   { id: "weigh-in", label: "Weigh-in", href: "/weigh-in", permission: "weighing.record" },
   { id: "sorting", label: "Sorting", href: "/sorting", permission: "sorting.record" },
   { id: "stock", label: "Stock", href: "/stock", permission: "stock.read" },
+  { id: "steps", label: "Steps", href: "/steps", permission: "steps.record" },
+  { id: "counts", label: "Counts", href: "/counts", permission: "stock.review" },
   { id: "removals", label: "Taken away", href: "/removals", permission: "removals.read" },
   { id: "reports", label: "Reports", href: "/reports", permission: "reports.read" },
   { id: "points", label: "Drop-off points", href: "/points/manage", permission: "points.manage" },

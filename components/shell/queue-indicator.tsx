@@ -2,13 +2,15 @@
 
 import Link from "next/link";
 import { useOutbox } from "@/components/forms/use-outbox";
+import { usePhotoSignal } from "../uploads/use-photo-signal";
 
 /**
- * "3 waiting to send": what was saved on this phone and has no receipt yet. It is on every signed-in page and
- * keeps sending. Nothing is shown while nothing waits.
+ * "3 waiting to send": what was saved on this phone and has no receipt yet; or, when no ticket waits, how many
+ * photos do. It is on every signed-in page and keeps sending. Nothing is shown while nothing waits.
  */
 export function QueueIndicator() {
   const { waiting, refused } = useOutbox();
+  const photos = usePhotoSignal();
   return (
     <span role="status" className="contents">
       {refused > 0 ? (
@@ -17,10 +19,18 @@ export function QueueIndicator() {
         </QueueLink>
       ) : waiting > 0 ? (
         <QueueLink tone="text-warn bg-warn-soft">{waiting} waiting to send</QueueLink>
+      ) : photos.toLookAt > 0 ? (
+        <QueueLink tone="text-bad bg-bad-soft">
+          {countOfPhotos(photos.toLookAt)} to look at
+        </QueueLink>
+      ) : photos.waiting > 0 ? (
+        <QueueLink tone="text-warn bg-warn-soft">{countOfPhotos(photos.waiting)} to send</QueueLink>
       ) : null}
     </span>
   );
 }
+
+const countOfPhotos = (count: number): string => (count === 1 ? "1 photo" : `${count} photos`);
 
 function QueueLink({ tone, children }: { tone: string; children: React.ReactNode }) {
   return (

@@ -1,42 +1,48 @@
 "use client";
 
 import Link from "next/link";
+import { useRouter } from "next/navigation";
+import { useEffect } from "react";
 import { UnreachableError } from "@/components/forms/problem-document";
 import { Notice } from "@/components/ui/notice";
 import { PageHeader } from "@/components/ui/page-header";
 import { Skeleton } from "@/components/ui/skeleton";
 import { formatCode } from "@/lib/core/bag-code";
-import { useDeskLists } from "../weighing/use-desk-lists";
-import { SortedBagTicket } from "./sorted-bag-ticket";
-import { SortingTable } from "./sorting-table";
-import { useBag, useRejectReasons } from "./use-table";
+import { newId } from "@/lib/core/ids";
+import type { BagToSort } from "@/lib/sorting/contract/sortings";
+import { listKept } from "./kept-tables";
+import { useBag } from "./use-table";
 
-/** One bag: to be sorted, or as it was sorted. */
+/** Where a bag is on the table, was sorted, or can be sorted now; null when there is nothing to sort. */
+function tableOf(bag: BagToSort): `/sorting/${string}` | null {
+  if (bag.sorted) return `/sorting/sessions/${bag.sorted.sortingId}`;
+  if (bag.state !== "weighed") return null;
+  if (bag.draft) return `/sorting/table/${bag.draft.id}`;
+  const kept = listKept(bag.helperId).find(({ table }) => table.codes.includes(bag.code));
+  return kept ? `/sorting/table/${kept.id}` : `/sorting/table/${newId()}?bags=${bag.code}`;
+}
+
+/** One bag by its tag: goes on to its table, or says why it is on none. */
 export function BagOnTable({ code }: { code: string }) {
-  const bag = useBag(code);
-  const lists = useDeskLists();
-  const reasons = useRejectReasons();
-  const error = bag.error ?? lists.error ?? reasons.error;
-  const retry = () => void Promise.all([bag.refetch(), reasons.refetch()]);
+  const router = useRouter();
+  const { data: bag, error, refetch } = useBag(code);
+  const nothing = bag && !bag.sorted && bag.state !== "weighed";
+  useEffect(() => {
+    const address = bag ? tableOf(bag) : null;
+    if (address) router.replace(address);
+  }, [bag, router]);
 
-  if (bag.data && bag.data.state === "weighed" && lists.ready && reasons.data) {
-    return (
-      <SortingTable key={bag.data.code} bag={bag.data} lists={lists} reasons={reasons.data.items} />
-    );
-  }
   return (
     <>
       <PageHeader
         title={`Sorting ${formatCode(code)}`}
         back={{ href: "/sorting", label: "Back to bags that wait" }}
       />
-      {bag.data?.sorted ? (
-        <SortedBagTicket bag={bag.data} sorted={bag.data.sorted} />
-      ) : bag.data && bag.data.state !== "weighed" ? (
+      {nothing ? (
         <Notice
           tone="info"
           title={
-            bag.data.state === "sorted" || bag.data.state === "closed"
+            bag.state === "sorted" || bag.state === "closed"
               ? "This bag went straight into its lot at the scale."
               : "This bag has not been weighed in yet."
           }
@@ -54,13 +60,17 @@ export function BagOnTable({ code }: { code: string }) {
           title={error instanceof UnreachableError ? "The server did not answer" : error.message}
           live="status"
           action={
-            <button type="button" onClick={retry} className="link min-h-11 font-bold">
+            <button
+              type="button"
+              onClick={() => void refetch()}
+              className="link min-h-11 font-bold"
+            >
               Try again
             </button>
           }
         >
           {error instanceof UnreachableError
-            ? "Piles that were weighed already are kept on this device."
+            ? "Piles that were weighed already are kept on this phone."
             : "Check the code against the tag."}
         </Notice>
       ) : (

@@ -1,29 +1,43 @@
 "use client";
 
-import { useRouter } from "next/navigation";
 import { useCallback, useState, type SubmitEvent } from "react";
+import { CameraView } from "@/components/scanner/camera-view";
+import type { Verdict } from "@/components/scanner/feedback";
+import { useWedge } from "@/components/scanner/use-wedge";
 import { Button } from "@/components/ui/button";
 import { Icon } from "@/components/ui/icon";
 import { TextField } from "@/components/ui/text-field";
-import { readScan } from "@/lib/core/bag-code";
-import { CameraView } from "../weighing/camera-view";
+import { readScan, type LabelCode } from "@/lib/core/bag-code";
 import { CODE_SENTENCES } from "../weighing/read-form";
 
+type Props = {
+  /** Constant between renders. */
+  onCode: (code: LabelCode) => void;
+  /** What the button does: "Sort it". */
+  action: string;
+};
+
 /** The bag's tag: scanned with the camera, read by a hand scanner, or typed. A wrong code is told at once. */
-export function CodeEntry() {
-  const router = useRouter();
+export function CodeEntry({ onCode, action }: Props) {
   const [text, setText] = useState("");
   const [problem, setProblem] = useState<string>();
   const [scanning, setScanning] = useState(false);
 
   const take = useCallback(
-    (read: string) => {
+    (read: string): Verdict => {
       const code = readScan(read);
-      if (code) router.push(`/sorting/${code}`);
-      else setProblem(read.trim() === "" ? CODE_SENTENCES.empty : CODE_SENTENCES.wrong);
+      if (code) {
+        setText("");
+        setProblem(undefined);
+        onCode(code);
+        return "read";
+      }
+      setProblem(read.trim() === "" ? CODE_SENTENCES.empty : CODE_SENTENCES.wrong);
+      return "unknown";
     },
-    [router],
+    [onCode],
   );
+  useWedge(take);
 
   function open(event: SubmitEvent) {
     event.preventDefault();
@@ -60,7 +74,7 @@ export function CodeEntry() {
           {scanning ? "Stop scanning" : "Scan"}
         </Button>
         <Button type="submit" className="max-wide:grow">
-          Sort it
+          {action}
         </Button>
       </form>
     </div>

@@ -1,4 +1,4 @@
-/** What lies on the table as typed, kept on this device until it is saved; and what it comes to. */
+/** What lies on the table as typed, and what it comes to. */
 import { newId } from "@/lib/core/ids";
 import type { Form, Kind, WashState } from "@/lib/core/plastics";
 import type { CloseSortingInput, PILE_POLYMERS } from "@/lib/sorting/contract/sortings";
@@ -15,12 +15,15 @@ export type PileDraft = {
   kind: Kind | "";
   form: Form;
   wash: WashState;
+  /** The lot that somebody chose for it; null: it goes where such piles go by themselves. */
+  lot: number | "new" | null;
   reading: ReadingValue;
 };
 export type RejectDraft = { id: string; reason: string; reading: ReadingValue };
-export type Draft = { piles: PileDraft[]; rejects: RejectDraft[] };
+/** Empty scale: the one that stands beside this device. */
+export type Draft = { scaleId: string; piles: PileDraft[]; rejects: RejectDraft[] };
 
-export const EMPTY_DRAFT: Draft = { piles: [], rejects: [] };
+export const EMPTY_DRAFT: Draft = { scaleId: "", piles: [], rejects: [] };
 
 /** A new pile: of the last one's polymer and kind, because piles of one bag are mostly alike. */
 export function newPile(last: PileDraft | undefined): PileDraft {
@@ -31,6 +34,7 @@ export function newPile(last: PileDraft | undefined): PileDraft {
     kind: last?.kind ?? "",
     form: last?.form ?? "whole",
     wash: last?.wash ?? "as-received",
+    lot: null,
     reading: emptyReading(last?.reading),
   };
 }
@@ -46,7 +50,10 @@ export function netOf(value: ReadingValue, tares: readonly ListedTare[]): number
 }
 
 /** Every reading that can be read, in the order piles, rejects. */
-export function readingsOf(draft: Draft, tares: readonly ListedTare[]): Reading[] {
+export function readingsOf(
+  draft: Pick<Draft, "piles" | "rejects">,
+  tares: readonly ListedTare[],
+): Reading[] {
   return [...draft.piles, ...draft.rejects].flatMap(({ reading }) => {
     const read = readReading(reading, tares);
     return read.ok ? [read.reading] : [];
@@ -57,7 +64,10 @@ type Body = Pick<CloseSortingInput, "piles" | "rejects">;
 type SentReading = Body["piles"][number]["reading"];
 
 /** Piles and rejects as the endpoint takes them; null while one of them is incomplete. */
-export function bodyOf(draft: Draft, tares: readonly ListedTare[]): Body | null {
+export function bodyOf(
+  draft: Pick<Draft, "piles" | "rejects">,
+  tares: readonly ListedTare[],
+): Body | null {
   const piles: Body["piles"] = [];
   const rejects: Body["rejects"] = [];
   for (const { id: _id, polymer, kind, colourCode, reading, ...rest } of draft.piles) {
@@ -69,7 +79,6 @@ export function bodyOf(draft: Draft, tares: readonly ListedTare[]): Body | null 
       polymer,
       kind,
       colourCode,
-      lot: null,
       reading: read.reading as SentReading,
     });
   }
@@ -79,36 +88,4 @@ export function bodyOf(draft: Draft, tares: readonly ListedTare[]): Body | null 
     rejects.push({ reason, reading: read.reading as SentReading });
   }
   return { piles, rejects };
-}
-
-/** Under an opaque id of the helper, so that one person on a shared phone never sees another's. */
-const keyOf = (helperId: string, code: string): string =>
-  `bismar-draft:sorting:${helperId}:${code}`;
-
-export function readDraft(helperId: string, code: string): Draft {
-  try {
-    const stored: unknown = JSON.parse(localStorage.getItem(keyOf(helperId, code)) ?? "null");
-    const looksRight =
-      typeof stored === "object" &&
-      stored !== null &&
-      "piles" in stored &&
-      Array.isArray(stored.piles) &&
-      "rejects" in stored &&
-      Array.isArray(stored.rejects);
-    return looksRight ? (stored as Draft) : EMPTY_DRAFT;
-  } catch {
-    // No storage, or a text that another version wrote: there is simply no draft.
-    return EMPTY_DRAFT;
-  }
-}
-
-/** Keeps the draft on this device; an empty one is forgotten. */
-export function writeDraft(helperId: string, code: string, draft: Draft): void {
-  try {
-    if (draft.piles.length + draft.rejects.length > 0) {
-      localStorage.setItem(keyOf(helperId, code), JSON.stringify(draft));
-    } else localStorage.removeItem(keyOf(helperId, code));
-  } catch {
-    // A full or forbidden storage must not stop the sorting; what is typed stays on the screen.
-  }
 }

@@ -1,6 +1,6 @@
 "use client";
 
-import type { RejectReason } from "@/lib/sorting/contract";
+import type { RejectReason } from "@/lib/sorting/contract/sortings";
 import type { DeskLists, DeskScale } from "../weighing/use-desk-lists";
 import type { Draft, PileDraft, RejectDraft } from "./draft";
 import { PileDialog } from "./pile-dialog";

@@ -24,6 +24,7 @@ import { ColourFromPhoto } from "../uploads/colour-from-photo";
 import type { ListedTare } from "../weighing/read-form";
 import type { DeskColour, DeskScale } from "../weighing/use-desk-lists";
 import { netOf, type PileDraft, type PilePolymer } from "./draft";
+import { LotField } from "./lot-field";
 import { WeighingFields } from "./weighing-fields";
 
 type Props = {
@@ -54,6 +55,8 @@ export function PileDialog({
   onClose,
 }: Props) {
   const [pile, setPile] = useState(first);
+  /** A lot is one of a material: with another material it is chosen anew. */
+  const say = (fields: Partial<PileDraft>) => setPile({ ...pile, lot: null, ...fields });
   const [asked, setAsked] = useState(false);
   const net = netOf(pile.reading, tares);
   const isSeven = SEVENS.some((seven) => seven === pile.polymer);
@@ -89,7 +92,7 @@ export function PileDialog({
           legend="Number on it"
           name="polymer"
           value={isSeven ? "O" : pile.polymer}
-          onChoose={(value) => setPile({ ...pile, polymer: value as PilePolymer })}
+          onChoose={(value) => say({ polymer: value as PilePolymer })}
           error={missing(pile.polymer === "", "Choose the number, or Not sure.")}
           choices={[
             ...TILES.map((polymer) => ({
@@ -105,7 +108,7 @@ export function PileDialog({
           <SelectField
             label="Letters beside the 7"
             value={pile.polymer}
-            onChange={(event) => setPile({ ...pile, polymer: event.target.value as PilePolymer })}
+            onChange={(event) => say({ polymer: event.target.value as PilePolymer })}
             options={SEVENS.map((polymer) => ({
               value: polymer,
               label: polymer === "O" ? "None, or others" : POLYMER_NAMES[polymer].name,
@@ -120,13 +123,13 @@ export function PileDialog({
         <ColourFromPhoto
           palette={colours}
           value={pile.colourCode}
-          onChoose={(colourCode) => setPile({ ...pile, colourCode })}
+          onChoose={(colourCode) => say({ colourCode })}
         />
         <ChoiceTiles
           legend="Colour"
           name="colour"
           value={pile.colourCode}
-          onChoose={(colourCode) => setPile({ ...pile, colourCode })}
+          onChoose={(colourCode) => say({ colourCode })}
           error={missing(pile.colourCode === "", "Choose the colour.")}
           choices={colours.map((colour) => ({
             value: colour.code,
@@ -146,24 +149,25 @@ export function PileDialog({
             label="Kind"
             placeholder="Choose"
             value={pile.kind}
-            onChange={(event) => setPile({ ...pile, kind: event.target.value as Kind | "" })}
+            onChange={(event) => say({ kind: event.target.value as Kind | "" })}
             error={missing(pile.kind === "", "Choose the kind.")}
             options={KINDS.map((kind) => ({ value: kind, label: KIND_NAMES[kind] }))}
           />
           <SelectField
             label="Form"
             value={pile.form}
-            onChange={(event) => setPile({ ...pile, form: event.target.value as Form })}
+            onChange={(event) => say({ form: event.target.value as Form })}
             options={FORMS.map((form) => ({ value: form, label: FORM_NAMES[form] }))}
           />
           <SelectField
             label="Washed?"
             className="max-wide:col-span-2"
             value={pile.wash}
-            onChange={(event) => setPile({ ...pile, wash: event.target.value as WashState })}
+            onChange={(event) => say({ wash: event.target.value as WashState })}
             options={WASH_STATES.map((wash) => ({ value: wash, label: WASH_NAMES[wash] }))}
           />
         </div>
+        <LotField pile={pile} onLot={(lot) => setPile({ ...pile, lot })} />
         <WeighingFields
           value={pile.reading}
           onValue={(reading) => setPile({ ...pile, reading })}

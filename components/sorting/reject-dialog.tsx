@@ -6,7 +6,7 @@ import { ChoiceTiles } from "@/components/ui/choice-tiles";
 import { Dialog } from "@/components/ui/dialog";
 import { Notice } from "@/components/ui/notice";
 import { formatKg } from "@/lib/core/mass";
-import type { RejectReason } from "@/lib/sorting/contract";
+import type { RejectReason } from "@/lib/sorting/contract/sortings";
 import type { ListedTare } from "../weighing/read-form";
 import type { DeskScale } from "../weighing/use-desk-lists";
 import { netOf, type RejectDraft } from "./draft";

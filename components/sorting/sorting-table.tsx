@@ -1,193 +1,239 @@
 "use client";
 
 import { useQueryClient } from "@tanstack/react-query";
-import { useState } from "react";
-import { UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
+import { useRouter } from "next/navigation";
+import { useEffect, useMemo, useRef, useState } from "react";
 import { useCommand } from "@/components/forms/use-command";
 import { ActionBar } from "@/components/ui/action-bar";
 import { Button } from "@/components/ui/button";
 import { Notice } from "@/components/ui/notice";
 import { PageHeader } from "@/components/ui/page-header";
-import { SelectField } from "@/components/ui/select-field";
 import { formatCode } from "@/lib/core/bag-code";
+import { newId } from "@/lib/core/ids";
 import { instant } from "@/lib/core/time";
 import type { LossCause } from "@/lib/ledger/terms";
-import type { BagToSort, closeSortingEndpoint, RejectReason } from "@/lib/sorting/contract/sortings";
-import { judgeSum, loadsOf, toleranceOf } from "@/lib/sorting/rules/table";
+import type { closeSortingEndpoint, RejectReason } from "@/lib/sorting/contract/sortings";
 import { CLOSE_SORTING_ADDRESS } from "@/lib/sorting/terms";
-import { netGramsOf } from "@/lib/scales/rules/reading";
-import { rememberedScale, rememberScale } from "../weighing/remembered-scale";
 import type { DeskLists } from "../weighing/use-desk-lists";
-import {
-  bodyOf,
-  EMPTY_DRAFT,
-  newPile,
-  newReject,
-  readDraft,
-  readingsOf,
-  writeDraft,
-  type Draft,
-} from "./draft";
-import { FractionDialogs, type Opened } from "./fraction-dialogs";
-import { FractionList } from "./fraction-list";
+import { boardOf } from "./board";
+import type { Draft } from "./draft";
+import { keepTable } from "./kept-tables";
 import { LeftoverDialog } from "./leftover-dialog";
-import { SumHead } from "./sum-head";
+import { OvertakenDialog } from "./overtaken-dialog";
+import { PilesBoard } from "./piles-board";
+import { SessionNotices } from "./session-notices";
+import { SortingPhotos } from "./sorting-photos";
+import { NOTHING_KEPT } from "./session-state";
+import { TableBags } from "./table-bags";
+import type { Session } from "./use-session";
+import { useBags } from "./use-table";
 
-type Props = { bag: BagToSort; lists: DeskLists; reasons: readonly RejectReason[] };
+type Props = {
+  id: string;
+  session: Session;
+  helperId: string;
+  timeZone: string;
+  lists: DeskLists;
+  reasons: readonly RejectReason[];
+};
 
-/** A bag is tipped out: piles and rejects are weighed until they add up to what it held. */
-export function SortingTable({ bag, lists, reasons }: Props) {
+type Answer = { cause: LossCause | null; confirmedAbove: boolean };
+
+/** Bags are tipped out: piles and rejects are weighed until they add up to what the bags held. */
+export function SortingTable({ id, session, helperId, timeZone, lists, reasons }: Props) {
+  const router = useRouter();
   const cache = useQueryClient();
   const save = useCommand<typeof closeSortingEndpoint>(CLOSE_SORTING_ADDRESS);
-  const [draft, setDraft] = useState(() => readDraft(bag.helperId, bag.code));
-  const [chosenScale, setChosenScale] = useState(() => rememberedScale());
-  const [opened, setOpened] = useState<Opened | null>(null);
   const [asking, setAsking] = useState(false);
+  const [offline, setOffline] = useState(false);
+  const sentAt = useRef<{ text: string; at: number } | null>(null);
+  const { state } = session;
+  const { codes, draft } = state.table;
+  const found = useBags(codes);
+  const board = boardOf(draft, found.bags ?? [], lists, found.known[0]?.scaleId ?? null);
+  const { scale, body, count, judged } = board;
+  const first = found.known[0];
 
-  const scale =
-    lists.scales.find(({ id }) => id === chosenScale) ??
-    lists.scales.find(({ id }) => id === bag.scaleId) ??
-    lists.scales[0];
-  const count = draft.piles.length + draft.rejects.length;
-  const readings = readingsOf(draft, lists.containers);
-  // Each pile is rounded to grams by itself, as the ledger takes it.
-  const sumGrams = readings.reduce((sum, reading) => sum + netGramsOf([reading]), 0);
-  const tolerance = toleranceOf([
-    ...bag.readings,
-    ...(scale ? readings.flatMap((reading) => loadsOf(reading, scale)) : []),
-  ]);
-  const verdict = judgeSum(bag.netGrams, sumGrams, tolerance, {
-    cause: null,
-    confirmedAbove: false,
-  });
-  const body = bodyOf(draft, lists.containers);
+  const { over } = state;
+  useEffect(() => {
+    if (over) void cache.invalidateQueries({ queryKey: ["sorting", "bag"] });
+  }, [over, cache]);
+  const savedId = useMemo(() => {
+    if (!over || !first || found.bags === null) return undefined;
+    return found.known.find(({ sorted }) => sorted?.sortingId === id)?.sorted?.sortingId ?? null;
+  }, [over, first, found, id]);
+  useEffect(() => {
+    // Nothing of one's own would be lost: straight to what was saved.
+    if (savedId && count === 0) router.replace(`/sorting/sessions/${savedId}`);
+  }, [savedId, count, router]);
 
   function change(next: Draft) {
-    setDraft(next);
-    writeDraft(bag.helperId, bag.code, next);
+    session.type({ codes, draft: next });
+    setOffline(false);
+    save.reset();
+  }
+  function changeCodes(next: readonly string[]) {
+    session.type({ codes: next, draft });
     save.reset();
   }
 
-  async function send(answer: { cause: LossCause | null; confirmedAbove: boolean }) {
+  async function send(answer: Answer) {
     if (!body || !scale) return;
-    const result = await save.send({
-      codes: [bag.code],
-      scaleId: scale.id,
-      occurredAt: instant(Date.now()),
-      ...body,
-      ...answer,
-    });
+    // What is on the server first: should another have changed it, that is looked at before anything is saved.
+    const kept = await session.keep();
+    setOffline(kept === "unreachable");
+    if (kept !== "kept") {
+      setAsking(false);
+      return;
+    }
+    const input = { codes: [...codes], scaleId: scale.id, ...body, ...answer };
+    // Sent again after a lost answer it must be the same request, to the millisecond.
+    const text = JSON.stringify(input);
+    if (sentAt.current?.text !== text) sentAt.current = { text, at: Date.now() };
+    const occurredAt = instant(sentAt.current.at);
+    const result = await save.send({ ...input, occurredAt }, { requestId: id });
     setAsking(false);
+    if (result.kind === "refused") session.hearRefusal(result.problem);
+    setOffline(result.kind === "unreachable");
     if (result.kind !== "done") return;
-    writeDraft(bag.helperId, bag.code, EMPTY_DRAFT);
-    // The page now shows the bag as it was sorted; the lists of bags and lots have changed too.
-    await cache.invalidateQueries();
+    session.forget();
+    router.replace(`/sorting/sessions/${id}`);
   }
 
   function close() {
-    if (verdict.kind === "within") void send({ cause: null, confirmedAbove: false });
+    if (judged.verdict.kind === "within") void send({ cause: null, confirmedAbove: false });
     else setAsking(true);
   }
 
+  async function putAside() {
+    await session.keep();
+    router.push("/sorting");
+  }
+
+  function goOn() {
+    const own = newId();
+    keepTable(helperId, { id: own, table: state.table, base: NOTHING_KEPT });
+    session.forget();
+    router.replace(`/sorting/table/${own}`);
+  }
+
+  const points = [...new Set(found.known.flatMap(({ pointName }) => pointName ?? []))];
+  const refusedField = Object.values(save.fieldErrors)[0];
   return (
     <>
       <PageHeader
-        title={`Sorting ${formatCode(bag.code)}`}
-        lead={bag.pointName ?? undefined}
+        title={
+          codes.length === 1
+            ? `Sorting ${formatCode(codes[0] ?? "")}`
+            : `Sorting ${codes.length} bags`
+        }
+        lead={points.length > 0 ? points.join(", ") : undefined}
         back={{ href: "/sorting", label: "Back to bags that wait" }}
       />
-      <div className="grid gap-4 rail:max-w-3xl">
-        <SumHead
-          draft={draft}
-          lists={lists}
-          netGrams={bag.netGrams}
-          sumGrams={sumGrams}
-          verdict={verdict}
-          tolerance={tolerance}
-        />
-        {count > 0 ? (
-          <FractionList
-            draft={draft}
-            lists={lists}
-            reasons={reasons}
-            errors={save.fieldErrors}
-            onOpen={setOpened}
+      <div className="grid items-start gap-4 rail:grid-cols-[minmax(0,38rem)_minmax(0,1fr)] rail:gap-x-10">
+        <div className="grid min-w-0 gap-4">
+          <SessionNotices
+            state={state}
+            savedId={savedId}
+            onTakeOff={(code) => changeCodes(codes.filter((other) => other !== code))}
+            onTakeAside={session.takeAside}
+            onGoOn={goOn}
           />
-        ) : null}
-        <div className="grid grid-cols-2 gap-2.5">
-          <Button
-            variant={count === 0 ? "act" : "quiet"}
-            onClick={() =>
-              setOpened({ kind: "pile", value: newPile(draft.piles.at(-1)), isNew: true })
-            }
-          >
-            Add pile
-          </Button>
-          <Button
-            variant="danger"
-            onClick={() =>
-              setOpened({
-                kind: "reject",
-                value: newReject((draft.rejects.at(-1) ?? draft.piles.at(-1))?.reading),
-                isNew: true,
-              })
-            }
-          >
-            Add reject
-          </Button>
+          {found.bags ? (
+            <PilesBoard
+              draft={draft}
+              board={board}
+              bagCount={codes.length}
+              lists={lists}
+              reasons={reasons}
+              errors={save.fieldErrors}
+              onDraft={change}
+            />
+          ) : (
+            <Notice tone="warn" title="What the bags held is not known yet" live="status">
+              {found.error ? "The server did not answer; it is asked again. " : ""}What was weighed
+              is kept on this phone.
+            </Notice>
+          )}
         </div>
-        <SelectField
-          label="Scale"
-          value={scale?.id ?? ""}
-          onChange={(event) => {
-            setChosenScale(event.target.value);
-            rememberScale(event.target.value);
-          }}
-          options={lists.scales.map(({ id, name }) => ({ value: id, label: name }))}
-        />
-        {save.unreachable ? (
-          <Notice tone="warn" title="The server did not answer" live="alert">
-            {UNREACHABLE_SENTENCE}
-          </Notice>
-        ) : save.problem ? (
-          <Notice tone="bad" title="Nothing was saved" live="alert">
-            {Object.values(save.fieldErrors)[0] ?? save.problem.detail}
-          </Notice>
-        ) : null}
+        <div className="grid min-w-0 gap-4">
+          <TableBags
+            codes={codes}
+            known={found.known}
+            refused={state.refused}
+            onCodes={changeCodes}
+          />
+          <SortingPhotos
+            id={id}
+            helperId={helperId}
+            timeZone={timeZone}
+            what={codes.length === 1 ? `Bag ${formatCode(codes[0] ?? "")}` : "Bags on the table"}
+            grams={found.bags ? judged.netGrams : null}
+          />
+          {over ? null : (
+            <div className="flex flex-wrap items-center justify-between gap-x-4">
+              <p role="status" className="text-sm text-soft">
+                {keptWords(session)}
+              </p>
+              <Button variant="quiet" size="small" onClick={() => void putAside()}>
+                Put aside
+              </Button>
+            </div>
+          )}
+          {offline ? (
+            <Notice tone="warn" title="Not saved: the server did not answer" live="alert">
+              Saving needs the network. Everything is kept on this phone; try again when there is
+              signal.
+            </Notice>
+          ) : save.problem && !over && !state.refused ? (
+            <Notice tone="bad" title="Nothing was saved" live="alert">
+              {refusedField ?? save.problem.detail}
+            </Notice>
+          ) : null}
+        </div>
       </div>
-      {count > 0 ? (
+      {count > 0 && !over ? (
         <ActionBar>
-          <Button className="grow" onClick={close} busy={save.pending} disabled={!body || !scale}>
-            {body
-              ? `Save ${count} ${count === 1 ? "weight" : "weights"}, close bag`
-              : "A pile is not complete"}
+          <Button
+            className="grow"
+            onClick={close}
+            busy={save.pending || (session.keeping && asking)}
+            disabled={!body || !scale || !found.bags || state.refused !== null}
+          >
+            {saveWords(body !== null, count, codes.length)}
           </Button>
         </ActionBar>
       ) : null}
-      {opened ? (
-        <FractionDialogs
-          key={opened.value.id}
-          opened={opened}
-          draft={draft}
+      {state.theirs ? (
+        <OvertakenDialog
+          who={state.theirs.who}
+          mine={state.table}
+          theirs={state.theirs.table}
           lists={lists}
-          scale={scale}
           reasons={reasons}
-          onDraft={(next) => {
-            change(next);
-            setOpened(null);
-          }}
-          onClose={() => setOpened(null)}
+          onChoose={session.choose}
         />
-      ) : null}
-      {asking ? (
+      ) : asking ? (
         <LeftoverDialog
-          differenceGrams={verdict.differenceGrams}
-          toleranceMilligrams={tolerance}
-          busy={save.pending}
+          differenceGrams={judged.verdict.differenceGrams}
+          toleranceMilligrams={judged.toleranceMilligrams}
+          busy={save.pending || session.keeping}
           onSave={(cause) => void send({ cause, confirmedAbove: cause === null })}
           onClose={() => setAsking(false)}
         />
       ) : null}
     </>
   );
+}
+
+function saveWords(complete: boolean, count: number, bags: number): string {
+  if (!complete) return "A pile is not complete";
+  const weights = `${count} ${count === 1 ? "weight" : "weights"}`;
+  return `Save ${weights}, close ${bags === 1 ? "bag" : `${bags} bags`}`;
+}
+
+function keptWords({ state, keeping }: Session): string {
+  if (!state.reached) return "Kept on this phone; the server does not answer.";
+  if (keeping) return "Keeping it";
+  return state.base.version > 0 ? "Kept, not saved yet" : "";
 }

@@ -2,24 +2,24 @@
 
 import { TONE_TEXT } from "@/components/ui/figure";
 import { formatKg } from "@/lib/core/mass";
-import type { SumVerdict } from "@/lib/sorting/rules";
 import { PATTERNS } from "../stock/patterns";
 import type { DeskLists } from "../weighing/use-desk-lists";
 import { netOf, type Draft } from "./draft";
+import type { Judged } from "./judged";
 import { SumBar, type Segment } from "./sum-bar";
 import { sumWords } from "./sum-words";
 
 type Props = {
   draft: Draft;
   lists: DeskLists;
-  netGrams: number;
-  sumGrams: number;
-  verdict: SumVerdict;
-  tolerance: number;
+  judged: Judged;
+  /** How many bags were tipped. */
+  bagCount: number;
 };
 
-/** The largest thing on the table: what is weighed of what the bag held. */
-export function SumHead({ draft, lists, netGrams, sumGrams, verdict, tolerance }: Props) {
+/** The largest thing on the table: what is weighed of what the bags held. */
+export function SumHead({ draft, lists, judged, bagCount }: Props) {
+  const { netGrams, sumGrams, verdict, toleranceMilligrams } = judged;
   const segments: Segment[] = [
     ...draft.piles.map((pile) => {
       const colour = lists.colours.find(({ code }) => code === pile.colourCode);
@@ -37,7 +37,11 @@ export function SumHead({ draft, lists, netGrams, sumGrams, verdict, tolerance }
       pattern: "reject" as const,
     })),
   ];
-  const said = sumWords(verdict, draft.piles.length + draft.rejects.length, tolerance);
+  const said = sumWords(
+    verdict,
+    { fractions: draft.piles.length + draft.rejects.length, bags: bagCount },
+    toleranceMilligrams,
+  );
   return (
     <section aria-label="Weighed so far">
       <p className="mb-3 flex flex-wrap items-baseline gap-x-3">

@@ -16,10 +16,14 @@ type Props = {
   tares: readonly ListedTare[];
   /** Shows at once what is missing, as after a tap on the button. */
   asked: boolean;
+  /** Before each field's name, where there are several of these: "readings.0." */
+  prefix?: string;
+  /** A refusal of what the scale shows. */
+  error?: string | undefined;
 };
 
 /** One weighing: what the scale shows, what carries it, and the net, live. */
-export function WeighingFields({ value, onValue, scale, tares, asked }: Props) {
+export function WeighingFields({ value, onValue, scale, tares, asked, prefix = "", error }: Props) {
   const net = netOf(value, tares);
   const refusal = readingRefusal(value, tares, scale);
   const read = readReading(value, tares);
@@ -29,10 +33,10 @@ export function WeighingFields({ value, onValue, scale, tares, asked }: Props) {
       <div className="grid grid-cols-2 gap-4">
         <WeightField
           label="The scale shows"
-          name="gross"
+          name={`${prefix}gross`}
           text={value.gross}
           onText={(gross) => onValue({ ...value, gross })}
-          error={refusal ?? undefined}
+          error={error ?? refusal ?? undefined}
           showProblem={asked}
         />
         <WeightDisplay
@@ -45,7 +49,7 @@ export function WeighingFields({ value, onValue, scale, tares, asked }: Props) {
       <div className="grid grid-cols-2 gap-3">
         <TareField
           label="Container"
-          name="container"
+          name={`${prefix}container`}
           value={value.container}
           listed={tares.filter((tare) => tare.kind === "container")}
           onChange={(container) => onValue({ ...value, container })}
@@ -53,7 +57,7 @@ export function WeighingFields({ value, onValue, scale, tares, asked }: Props) {
         />
         <TareField
           label="Sack"
-          name="sack"
+          name={`${prefix}sack`}
           value={value.sack}
           listed={tares.filter((tare) => tare.kind === "sack")}
           onChange={(sack) => onValue({ ...value, sack })}

@@ -29,7 +29,7 @@ export function LotBags({ bags, count, timeZone }: Props) {
             head: true,
             cell: (bag) => (
               <Link
-                href={`/sorting/${bag.code}`}
+                href={`/bags/${bag.code}`}
                 className="link inline-flex min-h-11 items-center font-mono"
               >
                 {formatCode(bag.code)}

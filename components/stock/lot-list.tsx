@@ -5,12 +5,13 @@ import { PileSwatch } from "@/components/ui/pile-swatch";
 import { formatKg } from "@/lib/core/mass";
 import { dayOf, formatDay, instant } from "@/lib/core/time";
 import type { LotSummary } from "@/lib/stock/contract/lots";
+import { endWords } from "@/lib/stock/rules/lot-ends";
 import { pileDetail, pileName } from "@/lib/stock/rules/material-words";
 import { PATTERNS } from "./patterns";
 
 type Props = { lots: readonly LotSummary[]; timeZone: string };
 
-/** Lots that hold something, each leading to its page. */
+/** Lots, each leading to its page. */
 export function LotList({ lots, timeZone }: Props) {
   return (
     <DataTable
@@ -18,9 +19,9 @@ export function LotList({ lots, timeZone }: Props) {
       rows={lots}
       rowKey={(lot) => lot.number}
       empty={
-        <EmptyState title="No lot holds this now">
+        <EmptyState title="No lot is like this now">
           What is sorted goes to a lot of its polymer, colour, kind and form; the lot opens by
-          itself.
+          itself. Emptied lots are found with “Which: all”.
         </EmptyState>
       }
       columns={[
@@ -53,7 +54,26 @@ export function LotList({ lots, timeZone }: Props) {
             </>
           ),
         },
-        { key: "place", header: "Place", cell: (lot) => lot.place || "Not said" },
+        {
+          key: "place",
+          header: "Place",
+          cell: (lot) => [lot.place, lot.containerName].filter(Boolean).join(", ") || "Not said",
+        },
+        {
+          key: "state",
+          header: "State",
+          cell: (lot) =>
+            lot.closedAt === null ? (
+              "Open"
+            ) : (
+              <>
+                Closed
+                {lot.closedFor === null ? null : (
+                  <span className="block text-sm text-soft">{endWords(lot.closedFor)}</span>
+                )}
+              </>
+            ),
+        },
         {
           key: "opened",
           header: "Opened",

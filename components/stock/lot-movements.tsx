@@ -3,49 +3,14 @@ import { DataTable } from "@/components/ui/data-table";
 import { formatCode } from "@/lib/core/bag-code";
 import { formatKg } from "@/lib/core/mass";
 import { day, dayOf, formatClock, formatDay, instant } from "@/lib/core/time";
-import { ENTRY_KINDS, type EntryKind } from "@/lib/ledger/terms";
 import type { LotMovement } from "@/lib/stock/contract/lots";
+import { MovementWords } from "./movement-words";
 
 type Props = {
   number: number;
   page: { movements: readonly LotMovement[]; next: string | null };
   timeZone: string;
 };
-
-const WORDS: Record<EntryKind, string> = {
-  "weigh-in": "Weighed in as one kind",
-  sort: "Sorted into it",
-  step: "Step",
-  identify: "Identified",
-  move: "Moved",
-  count: "Counted",
-  opening: "Counted in on the first day",
-  draw: "Taken out",
-  return: "Put back",
-  finish: "Came from a run",
-  cut: "Cutting",
-  "take-back": "Pieces taken back",
-  removal: "Taken away",
-  receipt: "Receipt",
-  import: "Imported",
-  reversal: "Taken back",
-  settling: "Settled after a correction",
-};
-
-const isKind = (kind: string): kind is EntryKind => ENTRY_KINDS.some((known) => known === kind);
-
-function Cause({ movement }: { movement: LotMovement }) {
-  const words = isKind(movement.kind) ? WORDS[movement.kind] : movement.kind;
-  return (
-    <>
-      <span className="block">{words}</span>
-      <span className="block text-sm text-soft">
-        Entry {movement.entryId}
-        {movement.reverses === null ? "" : `, takes back entry ${movement.reverses}`}
-      </span>
-    </>
-  );
-}
 
 /** Everything that ever went into or out of a lot, newest first. */
 export function LotMovements({ number, page, timeZone }: Props) {
@@ -79,7 +44,11 @@ export function LotMovements({ number, page, timeZone }: Props) {
               );
             },
           },
-          { key: "what", header: "What", cell: (movement) => <Cause movement={movement} /> },
+          {
+            key: "what",
+            header: "What",
+            cell: (movement) => <MovementWords movement={movement} />,
+          },
           {
             key: "bag",
             header: "Bag",
@@ -88,7 +57,7 @@ export function LotMovements({ number, page, timeZone }: Props) {
                 "–"
               ) : (
                 <Link
-                  href={`/sorting/${bagCode}`}
+                  href={`/bags/${bagCode}`}
                   className="link inline-flex min-h-11 items-center font-mono"
                 >
                   {formatCode(bagCode)}

@@ -13,6 +13,7 @@ import {
   retireColourEndpoint,
   type Colour,
 } from "@/lib/stock/contract/palette";
+import { PaletteClosePairs } from "./palette-close-pairs";
 import { PaletteDialog } from "./palette-dialog";
 import { PaletteRow } from "./palette-row";
 
@@ -60,6 +61,7 @@ export function PaletteManager({ colours }: { colours: readonly Colour[] }) {
       <p role="status" className="sr-only">
         {moved}
       </p>
+      <PaletteClosePairs colours={open} />
       {colours.length === 0 ? (
         <EmptyState title="No colour yet">Add the colours that the shed sorts into.</EmptyState>
       ) : (

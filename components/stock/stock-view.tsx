@@ -15,6 +15,7 @@ import { filterQuery, filterValues } from "./filter-query";
 import { ShelfGrid } from "./shelf-grid";
 import { ShelfSections } from "./shelf-sections";
 import { StockFilters } from "./stock-filters";
+import { StockLinks } from "./stock-links";
 import { stockQuery } from "./stock-query";
 
 /** The stock by polymer and colour, fresh by itself. The page's server has put the first answer into the cache. */
@@ -69,6 +70,7 @@ export function StockView({ first }: { first: StockFilter }) {
           ) : null
         }
       />
+      <StockLinks />
       <StockFilters filter={filter} onFilter={choose} />
       {isError ? (
         <Notice tone="warn" title="The server did not answer" live="status" className="mb-4">

@@ -4,7 +4,8 @@
  */
 import type { giveSpareTagEndpoint } from "@/lib/bags/contract";
 import type { listPointsEndpoint } from "@/lib/points/contract";
-import type { listContainersEndpoint, listScalesEndpoint } from "@/lib/scales/contract";
+import type { listContainersEndpoint } from "@/lib/scales/contract/containers";
+import type { listScalesEndpoint } from "@/lib/scales/contract/scales";
 import type { listColoursEndpoint } from "@/lib/stock/contract/palette";
 import type { AddressOf } from "../forms/fetch-endpoint";
 

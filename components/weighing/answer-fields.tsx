@@ -1,15 +1,19 @@
 "use client";
 
-import { useCallback } from "react";
+import { useCallback, type ReactNode } from "react";
 import { CheckField } from "@/components/ui/check-field";
 import { ChoiceTiles } from "@/components/ui/choice-tiles";
 import { Button } from "@/components/ui/button";
 import { KIND_NAMES, KINDS, type Kind, type PolymerAnswer } from "@/lib/core/plastics";
 import { CONDITION_NAMES, CONDITIONS, type Condition } from "@/lib/weighing/terms";
+import type { Lab } from "@/lib/core/colour";
 import { ColourTiles } from "./colour-tiles";
+import { Late } from "./late";
 import { ResinTiles } from "./resin-tiles";
 import type { DeskColour } from "./use-desk-lists";
 import type { WeighInForm } from "./use-weigh-in";
+
+const loadColourHelp = async () => (await import("../uploads/colour-help")).ColourHelp;
 
 const CONDITION_CHOICES = CONDITIONS.map((value) => ({ value, label: CONDITION_NAMES[value] }));
 /** Own regrind never comes in a bag. */
@@ -21,10 +25,14 @@ const KIND_CHOICES = KINDS.filter((kind) => kind !== "regrind").map((value) => (
 type Props = {
   weighIn: Pick<WeighInForm, "form" | "sameAsLast">;
   colours: readonly DeskColour[];
+  /** Where photos are taken: above the colours, which they help to choose. */
+  photos: ReactNode;
+  /** Colour of the photo just taken. */
+  middle: Lab | null;
 };
 
 /** What is in the bag, as far as it is known: all of it optional until the bag is said to be one kind. */
-export function AnswerFields({ weighIn, colours }: Props) {
+export function AnswerFields({ weighIn, colours, photos, middle }: Props) {
   const { form, sameAsLast } = weighIn;
   const { values, problems, set, forgive } = form;
   const choosePolymer = useCallback(
@@ -34,6 +42,7 @@ export function AnswerFields({ weighIn, colours }: Props) {
     [set],
   );
   const chooseColour = useCallback((colourCode: string) => set({ colourCode }), [set]);
+  const isClear = colours.find(({ code }) => code === values.colourCode)?.look === "clear";
   const blackWithCode = values.colourCode === "black" && isNamed(values.polymer);
   return (
     <div className="mt-4 grid gap-4">
@@ -43,17 +52,28 @@ export function AnswerFields({ weighIn, colours }: Props) {
         </Button>
       ) : null}
       <ResinTiles value={values.polymer} onChoose={choosePolymer} error={problems.polymer} />
-      <ColourTiles
-        colours={colours}
-        value={values.colourCode}
-        onChoose={chooseColour}
-        hint={
-          blackWithCode
-            ? "Only if each piece has its code moulded in. Black without a code is Not sure."
-            : undefined
-        }
-        error={problems.colourCode}
-      />
+      {photos}
+      <div>
+        <Late
+          load={loadColourHelp}
+          given={
+            middle && !isClear
+              ? { lab: middle, palette: colours, value: values.colourCode, onChoose: chooseColour }
+              : null
+          }
+        />
+        <ColourTiles
+          colours={colours}
+          value={values.colourCode}
+          onChoose={chooseColour}
+          hint={
+            blackWithCode
+              ? "Only if each piece has its code moulded in. Black without a code is Not sure."
+              : undefined
+          }
+          error={problems.colourCode}
+        />
+      </div>
       <ChoiceTiles
         legend="Condition"
         name="condition"

@@ -2,6 +2,7 @@
 
 import { Button } from "@/components/ui/button";
 import { SelectField } from "@/components/ui/select-field";
+import { ScaleToday } from "../scales/scale-today";
 import type { ReadingValue, TareValue } from "./form-values";
 import { TareField } from "./tare-field";
 import type { DeskLists } from "./use-desk-lists";
@@ -76,6 +77,7 @@ export function InstrumentFields({
           </Button>
         ) : null}
       </div>
+      <ScaleToday scaleId={scaleId} onScale={onScale} />
     </>
   );
 }

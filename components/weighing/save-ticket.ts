@@ -4,7 +4,7 @@ import { sendRequest } from "@/components/forms/send-request";
 import type { ProblemDocument } from "@/lib/core/errors";
 import { captureSentence } from "@/lib/core/capture-messages";
 import type { SendOutcome } from "@/lib/offline/queue";
-import type { WeighInReceipt } from "@/lib/weighing/contract";
+import type { WeighInReceipt } from "@/lib/weighing/contract/weigh-ins";
 import { WEIGH_IN_ADDRESS } from "@/lib/weighing/terms";
 import type { WeighInEndpointInput } from "./weigh-in-body";
 

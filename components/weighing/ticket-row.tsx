@@ -1,11 +1,12 @@
 "use client";
 
+import Link from "next/link";
 import { Ticket } from "@/components/ui/ticket";
 import { formatCode } from "@/lib/core/bag-code";
 import { formatKg } from "@/lib/core/mass";
 import { POLYMER_NAMES } from "@/lib/core/plastics";
 import { formatClock, type Instant } from "@/lib/core/time";
-import type { Ticket as WeighTicket } from "@/lib/weighing/contract";
+import type { Ticket as WeighTicket } from "@/lib/weighing/contract/weigh-ins";
 import { CONDITION_NAMES } from "@/lib/weighing/terms";
 import { UndoButton } from "./undo-button";
 
@@ -20,7 +21,13 @@ export function TicketRow({ ticket, zone, clockAheadMs }: Props) {
       <div className="px-4 py-3">
         <div className="flex items-start justify-between gap-3">
           <div className="min-w-0">
-            <span className="font-mono font-bold tracking-tighter">{formatCode(ticket.code)}</span>
+            <Link
+              href={`/bags/${ticket.code}`}
+              prefetch={false}
+              className="link -my-2.5 inline-flex min-h-11 items-center font-mono font-bold tracking-tighter"
+            >
+              {formatCode(ticket.code)}
+            </Link>
             <span className="block text-sm break-words text-soft">
               {ticket.pointName}, {formatClock(ticket.recordedAt as Instant, zone)}
               {ticket.mine ? "" : `, ${ticket.byName}`}
@@ -34,6 +41,13 @@ export function TicketRow({ ticket, zone, clockAheadMs }: Props) {
         </div>
         <div className="mt-1 flex flex-wrap items-center justify-between gap-x-3 gap-y-1">
           <span className="text-sm text-soft">{ticketWords(ticket)}</span>
+          <Link
+            href={`/weigh-ins/${ticket.id}`}
+            prefetch={false}
+            className="link -my-2 inline-flex min-h-11 items-center text-sm font-bold"
+          >
+            See the ticket<span className="sr-only"> of {formatCode(ticket.code)}</span>
+          </Link>
           {undoUntil !== null ? (
             <UndoButton ticket={{ ...ticket, undoUntil }} clockAheadMs={clockAheadMs} />
           ) : null}

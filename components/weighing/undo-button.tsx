@@ -6,7 +6,7 @@ import { UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
 import { useCommand } from "@/components/forms/use-command";
 import { Button } from "@/components/ui/button";
 import { formatCode } from "@/lib/core/bag-code";
-import type { Ticket, undoWeighInEndpoint } from "@/lib/weighing/contract";
+import type { Ticket, undoWeighInEndpoint } from "@/lib/weighing/contract/weigh-ins";
 import { UNDO_WEIGH_IN_ADDRESS } from "@/lib/weighing/terms";
 
 type Props = {

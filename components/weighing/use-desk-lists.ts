@@ -3,7 +3,8 @@
 import { useQuery } from "@tanstack/react-query";
 import { fetchEndpoint, type OutputOf } from "@/components/forms/fetch-endpoint";
 import type { listPointsEndpoint } from "@/lib/points/contract";
-import type { listContainersEndpoint, listScalesEndpoint } from "@/lib/scales/contract";
+import type { listContainersEndpoint } from "@/lib/scales/contract/containers";
+import type { listScalesEndpoint } from "@/lib/scales/contract/scales";
 import type { listColoursEndpoint } from "@/lib/stock/contract/palette";
 import { COLOURS, CONTAINERS, POINTS, SCALES } from "./addresses";
 

@@ -1,7 +1,7 @@
 "use client";
 
 import { useEffect, useRef } from "react";
-import { isTouched, type FormValues } from "./form-values";
+import { isTouched, nextForm, type FormValues } from "./form-values";
 import type { TicketForm } from "./use-ticket-form";
 
 /** Under an opaque id, so that one helper of a shared phone never sees another's. */
@@ -17,7 +17,8 @@ function readDraft(helperId: string): FormValues | null {
       "readings" in draft &&
       Array.isArray(draft.readings) &&
       draft.readings.length > 0;
-    return looksRight ? (draft as FormValues) : null;
+    // What a draft of an earlier version lacks, such as its id, it gets now.
+    return looksRight ? { ...nextForm(""), ...(draft as FormValues) } : null;
   } catch {
     // No storage, or a text that another version wrote: there is simply no draft.
     return null;

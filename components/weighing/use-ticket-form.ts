@@ -8,8 +8,8 @@ import type { Problems } from "./read-form";
  * The typed ticket and its sentences by field. It is this small because the weigh-in page must load on a slow
  * phone: react-hook-form, which the desk's other forms use, would be a quarter of what the page may send.
  */
-export function useTicketForm() {
-  const [values, setValues] = useState<FormValues>(() => nextForm(""));
+export function useTicketForm(first?: () => FormValues) {
+  const [values, setValues] = useState<FormValues>(first ?? (() => nextForm("")));
   const [problems, setProblems] = useState<Problems>({});
   // What is typed is read again after waits (a scan, an answer), when a render's own copy would be old.
   const latest = useRef(values);

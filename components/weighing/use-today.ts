@@ -2,7 +2,7 @@
 
 import { queryOptions, useQuery } from "@tanstack/react-query";
 import { fetchEndpoint } from "@/components/forms/fetch-endpoint";
-import type { todayEndpoint } from "@/lib/weighing/contract";
+import type { todayEndpoint } from "@/lib/weighing/contract/weigh-ins";
 import { TODAY_ADDRESS } from "@/lib/weighing/terms";
 
 /** Today's tickets, kept fresh while the page is open: others weigh at the same desk. */

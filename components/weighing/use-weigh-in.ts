@@ -15,6 +15,12 @@ import type { DeskLists } from "./use-desk-lists";
 import { useDraft } from "./use-draft";
 import { useTicketForm } from "./use-ticket-form";
 
+/** Whoever empties the form gives up its photos too; those that were sent already are tidied by the server. */
+async function discardPhotos(subjectId: string): Promise<void> {
+  const { photoBox } = await import("../uploads/shared-photo-box");
+  await photoBox().dropSubject(subjectId);
+}
+
 /** What the page says about the last save. */
 export type Said =
   | { kind: "receipt"; receipt: KeptReceipt }
@@ -91,13 +97,20 @@ export function useWeighIn(lists: DeskLists, helperId: string | null) {
       saving.current = true;
       setPending(true);
       const label = labelOf(read.code, read.netGrams);
-      const input = inputOf(typed, read, { requestId: newId(), occurredAt, helperId, confirmed });
+      const input = inputOf(typed, read, {
+        requestId: typed.id,
+        occurredAt,
+        helperId,
+        confirmed,
+      });
       try {
         const result = await saveTicket(input, label);
         if (result.kind === "ask") {
           setAsking({ questions: result.questions, occurredAt });
         } else if (result.kind === "refused") {
           const { sentence, signIn } = result;
+          // An earlier sending did arrive; what is saved now is another reading, with an id of its own.
+          if (result.problem?.code === "request-id-reused") set({ id: newId(), photos: false });
           setSaid({ kind: "refused", sentence, signIn });
           const fields = (result.problem?.errors ?? []).map((error) => [
             formField(error.path),
@@ -118,7 +131,7 @@ export function useWeighIn(lists: DeskLists, helperId: string | null) {
         setPending(false);
       }
     },
-    [get, say, helperId, lists.containers, lists.scales, next, queries, showProblems],
+    [get, set, say, helperId, lists.containers, lists.scales, next, queries, showProblems],
   );
 
   /** Answers what was asked with yes. */
@@ -144,7 +157,8 @@ export function useWeighIn(lists: DeskLists, helperId: string | null) {
   );
 
   const startOver = useCallback(() => {
-    const { scaleId, readings } = get();
+    const { id, scaleId, readings, photos } = get();
+    if (photos) void discardPhotos(id);
     reset(nextForm(scaleId, readings[0]));
     setSaid(null);
   }, [get, reset]);

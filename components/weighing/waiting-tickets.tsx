@@ -4,7 +4,6 @@ import { useState } from "react";
 import { outbox } from "@/components/forms/outbox";
 import { useOutbox } from "@/components/forms/use-outbox";
 import { Button } from "@/components/ui/button";
-import { newId } from "@/lib/core/ids";
 import { formatClock, type Instant } from "@/lib/core/time";
 import type { QueueItem } from "@/lib/offline/queue";
 import { WEIGH_IN_ADDRESS } from "@/lib/weighing/terms";
@@ -71,13 +70,12 @@ function WaitingItem({ item, zone, onEdit }: { item: QueueItem } & Props) {
     onEdit?.(input());
     await outbox().drop(item.requestId);
   };
-  /** The same ticket with the question answered; other content needs another id. */
+  /** The same ticket with the question answered, under the same id: a question keeps nothing. */
   const confirm = async () => {
-    const requestId = newId();
     const confirmed = asked?.questions.map(({ question }) => question) ?? [];
-    const rawBody = JSON.stringify({ ...input(), requestId, confirmed });
-    const { method, path, helper, madeAt, label } = item;
-    await outbox().drop(item.requestId);
+    const rawBody = JSON.stringify({ ...input(), confirmed });
+    const { requestId, method, path, helper, madeAt, label } = item;
+    await outbox().drop(requestId);
     await outbox().add({ requestId, method, path, helper, madeAt, label, rawBody });
   };
 

@@ -1,6 +1,7 @@
 "use client";
 
 import { useCallback, useState } from "react";
+import { useWedge } from "@/components/scanner/use-wedge";
 import { ActionBar } from "@/components/ui/action-bar";
 import { Button } from "@/components/ui/button";
 import { Icon } from "@/components/ui/icon";
@@ -13,6 +14,7 @@ import type { Instant } from "@/lib/core/time";
 import { whenWords } from "@/lib/weighing/rules";
 import { MOST_READINGS } from "@/lib/weighing/terms";
 import { AnswerFields } from "./answer-fields";
+import { BagPhotos, type PhotoColour } from "./bag-photos";
 import { drawnWords } from "./bag-words";
 import { CodeArea } from "./code-area";
 import { focusField } from "./focus-field";
@@ -24,13 +26,13 @@ import { rememberScale } from "./remembered-scale";
 import { SaidNotice } from "./said-notice";
 import type { DeskLists } from "./use-desk-lists";
 import { useReader } from "./use-reader";
-import { useScanned } from "./use-scanned";
+import { useScanned, useSettledScan } from "./use-scanned";
 import { useSettled } from "./use-settled";
 import type { WeighInForm } from "./use-weigh-in";
 import { WeightArea } from "./weight-area";
 
 /** Parts that a first bag with a typed code needs none of. */
-const loadCamera = async () => (await import("./camera-view")).CameraView;
+const loadCamera = async () => (await import("@/components/scanner/camera-view")).CameraView;
 const loadSpareTag = async () => (await import("./spare-tag-dialog")).SpareTagDialog;
 const loadAsk = async () => (await import("./ask-dialog")).AskDialog;
 
@@ -38,18 +40,33 @@ type Props = {
   weighIn: WeighInForm;
   lists: DeskLists;
   zone: string;
+  /** Whose session this is; null until the server said. */
+  helperId: string | null;
+  /** How many bags were weighed in today; null while that is not known. */
+  bagsToday: number | null;
   cameraOn: boolean;
   onCamera(on: boolean): void;
 };
 
 /** The form of one bag, from the tag to the save button under the thumb. */
-export function WeighInFields({ weighIn, lists, zone, cameraOn, onCamera }: Props) {
+export function WeighInFields({
+  weighIn,
+  lists,
+  zone,
+  helperId,
+  bagsToday,
+  cameraOn,
+  onCamera,
+}: Props) {
   const { form, scale, netGrams, pending, said, asking } = weighIn;
   const [spareOpen, setSpareOpen] = useState(false);
   const [fresh, setFresh] = useState(0);
+  const [photoColour, setPhotoColour] = useState<PhotoColour | null>(null);
   const { values, problems } = form;
   const reader = useReader(form, lists);
   const scanned = useScanned(values.code);
+  const settledScan = useSettledScan(values.code, scanned);
+  useWedge(reader.take);
   const message = (name: string): string | undefined => problems[name];
 
   const at = values.readings.length - 1;
@@ -89,7 +106,17 @@ export function WeighInFields({ weighIn, lists, zone, cameraOn, onCamera }: Prop
       <SaidNotice said={said} zone={zone} />
       <Late
         load={loadCamera}
-        given={cameraOn ? { onRead: reader.take, onTrouble: closeCamera, fresh } : null}
+        given={
+          cameraOn
+            ? {
+                onRead: reader.take,
+                settled: settledScan,
+                onTrouble: closeCamera,
+                fresh,
+                bagsToday,
+              }
+            : null
+        }
       />
       {reader.note ? (
         <p role="status" className="mb-2 font-bold">
@@ -164,7 +191,21 @@ export function WeighInFields({ weighIn, lists, zone, cameraOn, onCamera }: Prop
           error={message("pointId")}
         />
       ) : null}
-      <AnswerFields weighIn={weighIn} colours={lists.colours} />
+      <AnswerFields
+        weighIn={weighIn}
+        colours={lists.colours}
+        photos={
+          <BagPhotos
+            key={values.id}
+            form={form}
+            netGrams={netGrams}
+            zone={zone}
+            helperId={helperId}
+            onColour={setPhotoColour}
+          />
+        }
+        middle={photoColour?.id === values.id ? photoColour.middle : null}
+      />
       <div className="h-4" />
       <ActionBar>
         <Button

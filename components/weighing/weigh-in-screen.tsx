@@ -7,12 +7,16 @@ import { QueryProvider } from "@/components/forms/query-provider";
 import { ProblemError, UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
 import { Notice } from "@/components/ui/notice";
 import { Skeleton } from "@/components/ui/skeleton";
+import { usePhotoSignal } from "../uploads/use-photo-signal";
+import { Late } from "./late";
 import { TodayTickets } from "./today-tickets";
 import { useDeskLists } from "./use-desk-lists";
 import { useToday } from "./use-today";
 import { useWeighIn } from "./use-weigh-in";
 import { WaitingTickets } from "./waiting-tickets";
 import { WeighInFields } from "./weigh-in-fields";
+
+const loadWaitingPhotos = async () => (await import("../uploads/waiting-photos")).WaitingPhotos;
 
 /** Tickets shown under the form; the day's page has them all. */
 const SHOWN = 12;
@@ -32,6 +36,7 @@ function Desk() {
   const { data: today } = useToday(SHOWN);
   const zone = today?.timeZone ?? "UTC";
   const weighIn = useWeighIn(lists, today?.helperId ?? null);
+  const photos = usePhotoSignal();
   const [cameraOn, setCameraOn] = useState(false);
   const helperId = today?.helperId;
   useEffect(() => {
@@ -61,6 +66,8 @@ function Desk() {
               weighIn={weighIn}
               lists={lists}
               zone={zone}
+              helperId={today?.helperId ?? null}
+              bagsToday={today?.bags ?? null}
               cameraOn={cameraOn}
               onCamera={setCameraOn}
             />
@@ -71,6 +78,14 @@ function Desk() {
       </div>
       <div className="min-w-0">
         <WaitingTickets zone={zone} onEdit={weighIn.touched ? null : weighIn.edit} />
+        <Late
+          load={loadWaitingPhotos}
+          given={
+            photos.waiting + photos.toLookAt > 0
+              ? { zone, helperId: helperId ?? null, exceptSubject: weighIn.form.values.id }
+              : null
+          }
+        />
         <TodayTickets limit={SHOWN} heading="Today" />
       </div>
     </div>

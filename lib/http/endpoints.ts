@@ -17,6 +17,7 @@ import * as containers from "@/lib/scales/contract/containers";
 import * as scales from "@/lib/scales/contract/scales";
 import * as sortingDrafts from "@/lib/sorting/contract/drafts";
 import * as sorting from "@/lib/sorting/contract/sortings";
+import * as waiting from "@/lib/sorting/contract/waiting";
 import * as counts from "@/lib/stock/contract/counts";
 import * as lotCare from "@/lib/stock/contract/lot-care";
 import * as limits from "@/lib/stock/contract/limits";
@@ -52,6 +53,7 @@ const CONTRACTS: readonly Readonly<Record<string, unknown>>[] = [
   weighingCorrections,
   sorting,
   sortingDrafts,
+  waiting,
   destinations,
   removals,
   removalReceipts,

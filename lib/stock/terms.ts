@@ -41,6 +41,17 @@ export const LOT_END_NAMES: Record<LotEnd, string> = {
   "by-hand": "somebody closed it",
 };
 
+/** Lots as a list shows them. held: something is in it. closed: closed and not empty. empty: nothing is in it. */
+export const LOT_STATES = ["held", "open", "closed", "empty", "all"] as const;
+export type LotState = (typeof LOT_STATES)[number];
+export const LOT_STATE_NAMES: Record<LotState, string> = {
+  held: "Hold something",
+  open: "Open",
+  closed: "Closed, not empty",
+  empty: "Empty",
+  all: "All",
+};
+
 /**
  * count: the container was weighed. empty: the bin is empty. on-the-spot: more was wanted than the book held.
  * opening: what stood there on the scheme's first day.

@@ -83,19 +83,3 @@ export function missingOfMaterial(
 export function whenWords(at: Instant, zone: string): string {
   return `${formatDay(dayOf(at, zone))}, ${formatClock(at, zone)}`;
 }
-
-/**
- * First instant of the day on which `now` falls. Found by halving, because days of a zone may have 23 or 25
- * hours.
- */
-export function startOfDay(now: Instant, zone: string): Instant {
-  const today = dayOf(now, zone);
-  let before = now - 26 * 3_600_000;
-  let inside: number = now;
-  while (inside - before > 1) {
-    const middle = Math.floor((before + inside) / 2);
-    if (dayOf(middle as Instant, zone) === today) inside = middle;
-    else before = middle;
-  }
-  return inside as Instant;
-}

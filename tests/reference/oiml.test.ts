@@ -7,6 +7,7 @@ import fs from "node:fs";
 import Papa from "papaparse";
 import { describe, expect, it } from "vitest";
 import { readMass } from "@/lib/core/mass";
+import { judgeCheck } from "@/lib/scales/rules/check";
 import {
   checkScale,
   combinedTolerance,
@@ -64,6 +65,29 @@ describe("maximum permissible error in service (R 76-1 Table 6, doubled)", () =>
     expect(mpeInService(scale, Number(row.load_to_e_inclusive) * e)).toBe(inService);
     expect(mpeInService(scale, Number(row.load_from_e) * e + 1)).toBe(inService);
   });
+});
+
+describe("a check weight in service (R 76-1 Table 6, doubled)", () => {
+  it.each(mpeRows)(
+    "class $class at $load_to_e_inclusive e passes at ± $mpe_in_service_e e and not beyond",
+    (row) => {
+      const e = 5_000;
+      const scale = verified(row.class, e, row.class === "III" ? 10_000 : 1_000);
+      const mass = Number(row.load_to_e_inclusive) * e;
+      const limit = Number(row.mpe_in_service_e) * e;
+      for (const sign of [1, -1]) {
+        expect(judgeCheck(scale, mass, mass + sign * limit)).toEqual({
+          errorMilligrams: sign * limit,
+          limitMilligrams: limit,
+          passed: true,
+        });
+        expect(judgeCheck(scale, mass, mass + sign * (limit + 1)).passed).toBe(false);
+      }
+      // Just above a band's first load the limit is that band's, not the one below.
+      const first = Number(row.load_from_e) * e + 1;
+      expect(judgeCheck(scale, first, first + limit).passed).toBe(true);
+    },
+  );
 });
 
 type Example = { case: string; load: string; e_or_d: string; tolerance: string; source: string };

@@ -1,4 +1,4 @@
-/** A film for Chromium's fake camera: one still picture, held in front of the lens for as long as it runs. */
+/** Films for Chromium's fake camera: still pictures, each held in front of the lens for a while. */
 import fs from "node:fs";
 import type { GreyImage } from "./scan-sheets";
 
@@ -27,13 +27,26 @@ function frameOf(picture: GreyImage): Buffer {
 
 /** Writes a YUV4MPEG2 film of a grey picture; Chromium loops it. */
 export function writeFilm(file: string, picture: GreyImage): void {
-  const frame = frameOf(picture);
+  writeFilmOf(file, [picture], FRAMES, 30);
+}
+
+/** Of several pictures, one after the other for `framesEach` frames each; Chromium loops it. */
+export function writeFilmOf(
+  file: string,
+  pictures: readonly GreyImage[],
+  framesEach: number,
+  framesPerSecond: number,
+): void {
   const colourless = Buffer.alloc((WIDTH * HEIGHT) / 2, 128);
-  const pieces: Buffer[] = [
-    Buffer.from(`YUV4MPEG2 W${WIDTH} H${HEIGHT} F30:1 Ip A1:1 C420jpeg\n`, "latin1"),
-  ];
-  for (let count = 0; count < FRAMES; count += 1) {
-    pieces.push(Buffer.from("FRAME\n", "latin1"), frame, colourless);
+  const out = fs.openSync(file, "w");
+  fs.writeSync(out, `YUV4MPEG2 W${WIDTH} H${HEIGHT} F${framesPerSecond}:1 Ip A1:1 C420jpeg\n`);
+  for (const picture of pictures) {
+    const frame = frameOf(picture);
+    for (let count = 0; count < framesEach; count += 1) {
+      fs.writeSync(out, "FRAME\n");
+      fs.writeSync(out, frame);
+      fs.writeSync(out, colourless);
+    }
   }
-  fs.writeFileSync(file, Buffer.concat(pieces));
+  fs.closeSync(out);
 }

@@ -9,7 +9,7 @@ import { addContainer } from "@/lib/scales/commands/containers";
 import { addScale } from "@/lib/scales/commands/scales";
 import { FIRST_PALETTE } from "@/lib/stock/terms";
 import { weighBag } from "@/lib/weighing/commands/weigh-bag";
-import { weighInInputSchema, type WeighInReceipt } from "@/lib/weighing/contract";
+import { weighInInputSchema, type WeighInReceipt } from "@/lib/weighing/contract/weigh-ins";
 import { newScheme, NOON, type TestScheme } from "./scheme";
 
 /** One reading: gross in milligrams, by default in the crate (1.600 kg) and the sack (0.020 kg). */

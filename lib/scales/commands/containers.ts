@@ -14,9 +14,12 @@ import type {
   addContainerSchema,
   changeContainerSchema,
   ContainerReceipt,
+  reweighContainerEndpoint,
   retireContainerSchema,
-} from "../contract";
+} from "../contract/containers";
+import { requireScale } from "../queries/instruments";
 import { getContainer, type Container } from "../queries/scales";
+import { refuseReading, type Reading } from "../rules/reading";
 
 type ContainerId = Id<"container">;
 
@@ -85,6 +88,47 @@ export function changeContainer(
     return { ...before, name, tareMilligrams };
   });
 }
+
+/**
+ * Weighs a container or sack again, empty. What was saved keeps its tare, and a ticket that still waits is read
+ * with the tare of its own time.
+ *
+ * @throws AppError `not-found`, `unknown-scale`, `above-max`, `not-a-step`
+ */
+export function reweighContainer(
+  ctx: Context,
+  input: z.output<typeof reweighContainerEndpoint.input>,
+): ContainerReceipt {
+  allow(ctx, "scales.manage");
+  return once(ctx, `POST /api/containers/${input.containerId}/tares`, input.requestId, (tx) => {
+    const before = requireContainer(tx, input.containerId);
+    const scale = requireScale(tx, input.scaleId, ctx.now);
+    const tareMilligrams = input.readingMilligrams;
+    const refusal = refuseReading(scale, onPan(tareMilligrams), 0);
+    if (refusal) throw new AppError(refusal.code, refusal.detail, ["readingMilligrams"]);
+    prepared(tx.client, "update containers set tare_mg = ? where id = ?").run(
+      tareMilligrams,
+      before.id,
+    );
+    keepTare(tx, ctx, before.id, tareMilligrams);
+    recordAudit(tx, ctx, {
+      action: "containers.reweigh",
+      subjectKind: "container",
+      subjectId: before.id,
+      fields: { tareMilligrams, tareBefore: before.tareMilligrams, scaleId: scale.id },
+    });
+    return { ...before, tareMilligrams };
+  });
+}
+
+/** A load that stands on the scale by itself. */
+const onPan = (grossMilligrams: number): Reading => ({
+  grossMilligrams,
+  containerId: null,
+  containerTareMilligrams: 0,
+  sackId: null,
+  sackTareMilligrams: 0,
+});
 
 /**
  * Takes a container or sack out of the lists. Retiring a retired one changes nothing.

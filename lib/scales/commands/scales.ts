@@ -15,7 +15,7 @@ import type {
   retireScaleSchema,
   ScaleData,
   ScaleReceipt,
-} from "../contract";
+} from "../contract/scales";
 import { getScale, type Scale } from "../queries/scales";
 import { checkScale, problemValues, specOf, type ScaleSpec } from "../rules/scale";
 

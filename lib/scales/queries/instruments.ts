@@ -91,7 +91,7 @@ export function isConfirmedOn(db: Readable, scaleId: ScaleId, day: Day): boolean
   if (cleared) return true;
   const passed = prepared(
     db.client,
-    "select passed from scale_checks where scale_id = ? and day = ? order by recorded_at desc limit 1",
+    "select passed from scale_checks where scale_id = ? and day = ? order by attempt desc limit 1",
   )
     .pluck()
     .get(scaleId, day);

@@ -8,10 +8,8 @@ import type {
   ContainerReceipt,
   listContainersEndpoint,
   listContainersSchema,
-  listScalesEndpoint,
-  listScalesSchema,
-  ScaleReceipt,
-} from "../contract";
+} from "../contract/containers";
+import type { listScalesEndpoint, listScalesSchema, ScaleReceipt } from "../contract/scales";
 
 /** A scale as stored; also what lib/scales/rules.ts takes. Loads in whole milligrams. */
 export type Scale = ScaleReceipt;

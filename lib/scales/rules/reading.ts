@@ -112,15 +112,19 @@ export function isBelowMinimum(scale: ScaleSpec, readings: readonly Reading[]): 
 }
 
 /**
- * The errors that a bag's readings may have, in whole milligrams, added up: errors of one scale are fully
- * correlated. Each gross is a reading, and so is each listed tare.
+ * The error that each reading of a weighing may have, in whole milligrams: each gross is a reading, and so is each
+ * listed tare, which was read once on a scale too (this scale's error stands for it).
  */
+export function errorsOf(scale: ScaleSpec, readings: readonly Reading[]): number[] {
+  return readings.flatMap((reading) => {
+    const loads = [reading.grossMilligrams];
+    if (reading.containerId !== null) loads.push(reading.containerTareMilligrams);
+    if (reading.sackId !== null) loads.push(reading.sackTareMilligrams);
+    return loads.map((load) => mpeInService(scale, load));
+  });
+}
+
+/** The same errors added up: errors of one scale are fully correlated. */
 export function mpeOf(scale: ScaleSpec, readings: readonly Reading[]): number {
-  let sum = 0;
-  for (const reading of readings) {
-    sum += mpeInService(scale, reading.grossMilligrams);
-    if (reading.containerId !== null) sum += mpeInService(scale, reading.containerTareMilligrams);
-    if (reading.sackId !== null) sum += mpeInService(scale, reading.sackTareMilligrams);
-  }
-  return sum;
+  return errorsOf(scale, readings).reduce((sum, error) => sum + error, 0);
 }

@@ -5,7 +5,7 @@
  */
 import type { ErrorDetail } from "@/lib/core/errors";
 import { formatStep } from "@/lib/core/mass";
-import type { ScaleData } from "../contract";
+import type { ScaleData } from "../contract/scales";
 import type { ScaleClass } from "../terms";
 
 /** What the rules need to know of a scale. Loads in whole milligrams. */

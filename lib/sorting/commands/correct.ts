@@ -4,14 +4,14 @@ import { getBagById } from "@/lib/bags/queries";
 import { AppError } from "@/lib/core/errors";
 import type { SortingId } from "@/lib/core/ids";
 import { correctAct, type Draft } from "@/lib/ledger/commands/post";
-import { heldBy, listActEntries, loadLines } from "@/lib/ledger/queries/entries";
+import { heldBy } from "@/lib/ledger/queries/entries";
 import { listLaterUses } from "@/lib/ledger/queries/uses";
 import { UNSORTED } from "@/lib/ledger/terms";
 import { allow, requirePerson, type Context } from "@/lib/platform/context";
 import { prepared, type Tx } from "@/lib/platform/database";
 import { once } from "@/lib/platform/receipts";
 import type { CorrectSortingInput, CorrectSortingReceipt } from "../contract/sortings";
-import { getWeighedBag, listBagsOf } from "../queries/table";
+import { getWeighedBag, listBagsOf, takenFromBags } from "../queries/table";
 import { insertSession, judgeTableIn, sortDraft, type TippedBag } from "./session";
 import { releaseBagsIn, requireSorting } from "./undo";
 
@@ -85,14 +85,7 @@ export function correctSorting(ctx: Context, input: CorrectSortingInput): Correc
 
 /** The bags with what they hold once the session is taken back: what it took, and what corrections left since. */
 function bagsAgain(tx: Tx, wrong: { id: SortingId; actId: number }): TippedBag[] {
-  const taken = new Map<number, number>();
-  for (const { id, kind } of listActEntries(tx, wrong.actId)) {
-    if (kind !== "sort") continue;
-    for (const line of loadLines(tx, id)) {
-      if (line.account !== "bag" || line.holderId === null) continue;
-      taken.set(line.holderId, (taken.get(line.holderId) ?? 0) - line.grams);
-    }
-  }
+  const taken = takenFromBags(tx, wrong.actId);
   return listBagsOf(tx, wrong.id).map(({ id, code }) => {
     const bag = getBagById(tx, id);
     const weighed = getWeighedBag(tx, id, code);

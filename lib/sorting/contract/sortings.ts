@@ -24,7 +24,6 @@ import {
   REJECT_REASONS_ADDRESS,
   SORTING_STATES,
   UNDO_SORTING_ADDRESS,
-  WAITING_BAGS_ADDRESS,
 } from "../terms";
 
 /** What a pile can be said to be: "Mixed, to sort" is not among them, it is what a bag is before. */
@@ -146,32 +145,6 @@ export const correctSortingEndpoint = endpoint({
 export type CorrectSortingInput = z.output<(typeof correctSortingEndpoint)["input"]>;
 export type CorrectSortingReceipt = z.output<(typeof correctSortingEndpoint)["output"]>;
 
-export const waitingBagSchema = z.object({
-  code: z.string(),
-  pointName: z.string().nullable(),
-  weighedAt: z.number().int(),
-  netGrams: z.number().int(),
-  condition: z.enum(CONDITIONS).nullable(),
-  /** The guess at weigh-in; never a figure. */
-  polymer: z.enum(POLYMER_ANSWERS).nullable(),
-});
-export type WaitingBag = z.output<typeof waitingBagSchema>;
-
-export const waitingBagsEndpoint = endpoint({
-  ...WAITING_BAGS_ADDRESS,
-  summary: "Bags that wait to be sorted, oldest first, in pages.",
-  permission: "sorting.record",
-  input: z.object({
-    /** `next` of the page before. */
-    after: z.string().max(80).optional(),
-  }),
-  output: z.object({
-    bags: z.array(waitingBagSchema),
-    next: z.string().nullable(),
-    waiting: z.object({ bags: z.number().int(), grams: z.number().int() }),
-  }),
-});
-
 const scaleSpecSchema = z.object({
   class: z.enum(SCALE_CLASSES),
   maxMilligrams: z.number().int(),
@@ -226,6 +199,8 @@ export const bagToSortSchema = z.object({
   /** Each reading behind that net with the scale it was read on: they belong to the tolerance. */
   readings: z.array(z.object({ loadMilligrams: z.number().int(), scale: scaleSpecSchema })),
   scaleId: idSchema<"scale">().nullable(),
+  /** The session under way that has it on its table, and who changed it last. */
+  draft: z.object({ id: z.string(), who: z.string() }).nullable(),
   /** The last sorting of a bag that was sorted. */
   sorted: sortedBagSchema.nullable(),
 });

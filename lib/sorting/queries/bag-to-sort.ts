@@ -11,7 +11,9 @@ import { heldBy } from "@/lib/ledger/queries/entries";
 import { UNSORTED } from "@/lib/ledger/terms";
 import { actorId, allow, type Context } from "@/lib/platform/context";
 import { inSnapshot, prepared, type Readable } from "@/lib/platform/database";
-import type { BagToSort, bagToSortEndpoint, SortedBag, SortedFraction } from "../contract/sortings";
+import type { BagToSort, bagToSortEndpoint, SortedBag } from "../contract/sortings";
+import { draftOf } from "./drafts";
+import { asSorted, listFractions } from "./fractions";
 import { getWeighedBag, listLoads } from "./table";
 
 /**
@@ -36,6 +38,7 @@ export function getBagToSort(
       netGrams: weighed ? heldBy(db, weighed.holderId, UNSORTED) : 0,
       readings: weighed ? listLoads(db, weighed) : [],
       scaleId: weighed?.scaleId ?? null,
+      draft: draftOf(db, bag.id),
       sorted: findSorted(db, ctx, bag.id),
     };
   });
@@ -62,34 +65,7 @@ function findSorted(db: Readable, ctx: Context, bagId: BagId): SortedBag | null 
   const mine = judgeUndo({ ...row, doneBy }, actorId(ctx), ctx.now) === "fine";
   return {
     ...session,
-    fractions: listFractions(db, row.sortingId),
+    fractions: listFractions(db, row.sortingId).map(asSorted),
     undoUntil: mine ? undoUntil(row.recordedAt) : null,
   };
-}
-
-type FractionRow = Omit<NonNullable<SortedFraction["pile"]>, "lotNumber"> & {
-  lotNumber: number | null;
-  rejectName: string | null;
-  netGrams: number;
-};
-
-function listFractions(db: Readable, sortingId: string): SortedFraction[] {
-  const found = prepared(
-    db.client,
-    `select r.polymer, r.kind, m.form, m.wash, coalesce(c.name, r.colour_code) as colourName,
-            coalesce(c.hex, '#8d9490') as colourHex, coalesce(c.look, 'solid') as colourLook,
-            l.number as lotNumber, rr.name as rejectName, f.net_grams as netGrams
-       from fractions f
-       join materials m on m.id = f.material_id
-       join "rows" r on r.id = m.row_id
-       left join colours c on c.code = r.colour_code
-       left join lots l on l.id = f.lot_id
-       left join reject_reasons rr on rr.code = f.reject_reason
-      where f.session_id = ? order by f.seq`,
-  ).all(sortingId) as FractionRow[];
-  return found.map(({ rejectName, netGrams, lotNumber, ...pile }) => ({
-    pile: lotNumber === null ? null : { ...pile, lotNumber },
-    rejectName,
-    netGrams,
-  }));
 }

@@ -23,20 +23,26 @@ const DRAFT = `d.id, d.version, d.content, d.started_at as startedAt, d.changed_
   d.started_by as startedBy, d.changed_by as changedBy, c.name as changedName, s.name as startedName
   from sorting_drafts d join people c on c.id = d.changed_by join people s on s.id = d.started_by`;
 
-/** The open draft of another session that has this bag on its table. */
-export function otherDraftOf(
-  db: Readable,
-  bagId: BagId,
-  own: SortingId,
-): { id: SortingId; who: string } | null {
+/** The open draft that has this bag on its table, and who changed it last. */
+export function draftOf(db: Readable, bagId: BagId): { id: SortingId; who: string } | null {
   return (
     (prepared(
       db.client,
       `select d.id, p.name as who from sorting_draft_bags b
          join sorting_drafts d on d.id = b.draft_id join people p on p.id = d.changed_by
-        where b.bag_id = ? and b.live = 1 and d.state = 'open' and d.id <> ?`,
-    ).get(bagId, own) as { id: SortingId; who: string } | undefined) ?? null
+        where b.bag_id = ? and b.live = 1 and d.state = 'open'`,
+    ).get(bagId) as { id: SortingId; who: string } | undefined) ?? null
   );
+}
+
+/** The same, of another session than this one. */
+export function otherDraftOf(
+  db: Readable,
+  bagId: BagId,
+  own: SortingId,
+): { id: SortingId; who: string } | null {
+  const draft = draftOf(db, bagId);
+  return draft?.id === own ? null : draft;
 }
 
 function codesOf(db: Readable, draftId: string): string[] {

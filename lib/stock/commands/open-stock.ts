@@ -10,9 +10,8 @@ import { allow, requirePerson, type Context } from "@/lib/platform/context";
 import { once } from "@/lib/platform/receipts";
 import { requireScheme } from "@/lib/platform/scheme";
 import type { CountReceipt, OpenStockInput } from "../contract/counts";
-import { getColour } from "../queries/palette";
+import { requireColourInUse } from "../queries/palette";
 import { lotOf } from "../queries/lot-record";
-import { doneAt } from "../rules/counting";
 import { openLotIn } from "./lots";
 import { postCountIn, readFound } from "./post-count";
 
@@ -27,12 +26,11 @@ export function openStock(ctx: Context, input: OpenStockInput): CountReceipt {
   const person = requirePerson(ctx);
   return once<CountReceipt>(ctx, "POST /api/stock/openings", input.requestId, (tx) => {
     const { firstDay, timeZone } = requireScheme(tx);
-    const occurredAt = doneAt(input.occurredAt, ctx.now, ctx.now);
     if (dayOf(ctx.now, timeZone) !== firstDay) throw new AppError("opening-refused");
-    const colour = getColour(tx, input.colourCode);
-    if (!colour || colour.retiredAt !== null) {
-      throw new AppError("unknown-colour", {}, ["colourCode"]);
-    }
+    // A phone whose clock shows another day has weighed now.
+    const claimed = input.occurredAt <= ctx.now ? input.occurredAt : ctx.now;
+    const occurredAt = dayOf(claimed, timeZone) === firstDay ? claimed : ctx.now;
+    requireColourInUse(tx, input.colourCode, ["colourCode"]);
     const { scaleId, readings } = input;
     const found = readFound(tx, { found: "weighed", scaleId, readings }, occurredAt, []);
     const { polymer, kind, colourCode, form, wash } = input;

@@ -91,13 +91,23 @@ export function countDraft(
         ...(opening ? {} : readingOf(found)),
       },
       opening
-        ? { account: "opening", originNo: 0, materialId: lot.materialId, grams: -grams, ...readingOf(found) }
+        ? {
+            account: "opening",
+            originNo: 0,
+            materialId: lot.materialId,
+            grams: -grams,
+            ...readingOf(found),
+          }
         : { account: "difference", grams: -grams },
     ],
   };
 }
 
-function readingOf(found: Found): { basis: Basis; scaleNumber: number | null; mpeMilligrams: number } {
+function readingOf(found: Found): {
+  basis: Basis;
+  scaleNumber: number | null;
+  mpeMilligrams: number;
+} {
   return {
     basis: basisOfFound(found),
     scaleNumber: found.weighed?.scaleNumber ?? null,

@@ -17,6 +17,7 @@ import type {
 } from "../contract/counts";
 import { requireCount, type StoredCount } from "../queries/counts";
 import { bookGrams, lotOf } from "../queries/lot-record";
+import type { CountKind } from "../terms";
 import { closeLotIn } from "./close-lot";
 import { countDraft, insertCountIn, readFound, type CountToPost } from "./post-count";
 
@@ -106,6 +107,7 @@ export function correctCount(
         replacementId: replacement?.countId ?? null,
         reason: input.reason,
         doneBy: person,
+        // 0: both agreed with the book, and nothing moved.
         actId: actId ?? 0,
       });
       const lot = lotOf(tx, count.lotId);
@@ -141,10 +143,9 @@ function replacementOf(
 ): CountToPost | null {
   if (!input.replacement) return null;
   const found = readFound(tx, input.replacement, count.occurredAt, ["replacement"]);
-  const empty = input.replacement.found === "empty";
   return {
     countId: input.requestId as Id<"count">,
-    kind: count.kind === "opening" ? "opening" : empty ? "empty" : count.kind === "empty" ? "count" : count.kind,
+    kind: kindOf(count.kind, input.replacement.found === "empty"),
     lot: lotOf(tx, count.lotId),
     found,
     occurredAt: count.occurredAt,
@@ -152,4 +153,11 @@ function replacementOf(
     corrects: count.id,
     reviewedBy: person,
   };
+}
+
+/** An opening stays one; else an empty bin is one, and what was not empty after all is a plain count. */
+function kindOf(before: CountKind, empty: boolean): CountKind {
+  if (before === "opening") return "opening";
+  if (empty) return "empty";
+  return before === "empty" ? "count" : before;
 }

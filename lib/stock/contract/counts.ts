@@ -85,7 +85,11 @@ export const undoCountEndpoint = endpoint({
   summary: "Take a count back, within ten minutes and by whoever saved it.",
   permission: "stock.count",
   input: z.object({ requestId: requestIdSchema, id: idSchema<"count">() }),
-  output: z.object({ countId: idSchema<"count">(), number: z.number().int(), heldGrams: z.number().int() }),
+  output: z.object({
+    countId: idSchema<"count">(),
+    number: z.number().int(),
+    heldGrams: z.number().int(),
+  }),
 });
 export type UndoCountInput = z.output<(typeof undoCountEndpoint)["input"]>;
 

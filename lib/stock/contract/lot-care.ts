@@ -8,7 +8,8 @@ import { lotNumberSchema } from "./weighed";
 export const closeLotEndpoint = endpoint({
   method: "POST",
   path: "/api/lots/{number}/close",
-  summary: "Close a lot: its container is full, or nothing more shall go in. The next one opens by itself.",
+  summary:
+    "Close a lot: its container is full, or nothing more shall go in. The next one opens by itself.",
   permission: "stock.edit",
   input: z.object({
     requestId: requestIdSchema,
@@ -25,7 +26,8 @@ export const closeLotEndpoint = endpoint({
 export const setLotContainerEndpoint = endpoint({
   method: "PUT",
   path: "/api/lots/{number}/container",
-  summary: "Say in which listed container a lot lies; its empty weight is then taken off when it is counted.",
+  summary:
+    "Say in which listed container a lot lies; its empty weight is then taken off when it is counted.",
   permission: "stock.edit",
   input: z.object({
     requestId: requestIdSchema,

@@ -2,8 +2,8 @@
 import * as z from "zod";
 import { endpoint } from "@/lib/core/endpoint";
 import { FORMS, KINDS, POLYMER_ANSWERS, WASH_STATES } from "@/lib/core/plastics";
-import { requestIdSchema } from "@/lib/core/schemas";
-import { COLOUR_LOOKS, LOT_ENDS } from "../terms";
+import { idSchema, requestIdSchema } from "@/lib/core/schemas";
+import { COLOUR_LOOKS, LOT_ENDS, LOT_STATES } from "../terms";
 import { lotNumberSchema } from "./weighed";
 
 export const materialSchema = z.object({
@@ -34,15 +34,20 @@ export const listLotsEndpoint = endpoint({
   method: "GET",
   path: "/api/lots",
   summary:
-    "Lots that hold something, or with state=open those that piles go to; oldest first, by polymer, colour, kind, form and wash state.",
+    "Lots, oldest first: those that hold something, that are open, closed, empty, or all; by place, container, polymer, colour, kind, form and wash state.",
   permission: "stock.read",
   input: z.object({
-    state: z.enum(["held", "open"]).default("held"),
+    state: z.enum(LOT_STATES).default("held"),
     polymer: z.enum(POLYMER_ANSWERS).optional(),
     colourCode: z.string().max(40).optional(),
     kind: z.enum(KINDS).optional(),
     form: z.enum(FORMS).optional(),
     wash: z.enum(WASH_STATES).optional(),
+    /** Words of the place. */
+    place: z.string().trim().max(80).optional(),
+    containerId: idSchema<"container">().optional(),
+    /** This one alone, whatever its state. */
+    number: lotNumberSchema.optional(),
     /** Number of the last lot of the page before. */
     after: lotNumberSchema.optional(),
   }),
@@ -56,12 +61,27 @@ export const listLotsEndpoint = endpoint({
 /** The query string of the lots' page; whatever cannot be read there is left out. */
 export const lotsPageSchema = z.object({
   polymer: z.enum(POLYMER_ANSWERS).optional().catch(undefined),
-  colour: z.string().max(40).optional().catch(undefined),
+  colour: z.string().min(1).max(40).optional().catch(undefined),
   kind: z.enum(KINDS).optional().catch(undefined),
   form: z.enum(FORMS).optional().catch(undefined),
   wash: z.enum(WASH_STATES).optional().catch(undefined),
+  state: z.enum(LOT_STATES).optional().catch(undefined),
+  container: idSchema<"container">().optional().catch(undefined),
+  /** As typed: a lot's number, a label's code, or words of the place. */
+  q: z.string().trim().min(1).max(80).optional().catch(undefined),
   after: lotNumberSchema.optional().catch(undefined),
 });
+
+/** What a movement belongs to: the step, the count, the other lot of a move, the removal. */
+export const lotRecordRefSchema = z.object({
+  kind: z.enum(["weigh-in", "sorting", "step", "count", "lot-move", "removal", "other"]),
+  id: z.string(),
+  /** "shredding", "merge", "empty"; null where the kind says it all. */
+  detail: z.string().nullable(),
+  /** The other lot of a move. */
+  otherNumber: z.number().int().nullable(),
+});
+export type LotRecordRef = z.output<typeof lotRecordRefSchema>;
 
 export const lotMovementSchema = z.object({
   entryId: z.number().int(),
@@ -76,6 +96,8 @@ export const lotMovementSchema = z.object({
   doneBy: z.string().nullable(),
   /** Tag of the bag that it concerns, where there is one. */
   bagCode: z.string().nullable(),
+  /** The record behind it, for its words and its link. */
+  record: lotRecordRefSchema,
   /** The number of the entry that this one takes back. */
   reverses: z.number().int().nullable(),
 });

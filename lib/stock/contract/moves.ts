@@ -5,7 +5,13 @@ import { KINDS, POLYMERS } from "@/lib/core/plastics";
 import { idSchema, instantSchema, reasonSchema, requestIdSchema } from "@/lib/core/schemas";
 import { laterUsesSchema } from "@/lib/ledger/contract";
 import { IDENTIFY_METHODS, MOVE_KINDS, RECORD_STATES } from "../terms";
-import { amountSchema, lotAfterSchema, lotNumberSchema, onTheSpotSchema, weighedSchema } from "./weighed";
+import {
+  amountSchema,
+  lotAfterSchema,
+  lotNumberSchema,
+  onTheSpotSchema,
+  weighedSchema,
+} from "./weighed";
 
 const moveFields = {
   /** Made by the client; the id of the move. */
@@ -67,7 +73,8 @@ const identityFields = {
 export const identifyLotEndpoint = endpoint({
   method: "POST",
   path: "/api/lots/{number}/identify",
-  summary: "Say what a lot, or part of it, is that nobody was sure of; it moves to the lot of that polymer.",
+  summary:
+    "Say what a lot, or part of it, is that nobody was sure of; it moves to the lot of that polymer.",
   permission: "stock.identify",
   input: z.object({ ...moveFields, ...identityFields, amount: amountSchema }),
   output: moveReceiptSchema,
@@ -77,7 +84,8 @@ export type IdentifyLotInput = z.output<(typeof identifyLotEndpoint)["input"]>;
 export const undoMoveEndpoint = endpoint({
   method: "POST",
   path: "/api/lot-moves/{id}/undo",
-  summary: "Take a move back, within ten minutes and by whoever saved it. A lot that it opened stays.",
+  summary:
+    "Take a move back, within ten minutes and by whoever saved it. A lot that it opened stays.",
   permission: "stock.identify",
   input: z.object({ requestId: requestIdSchema, id: idSchema<"lot-move">() }),
   output: z.object({

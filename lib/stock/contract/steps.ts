@@ -69,7 +69,13 @@ const stepFields = {
   kind: z.enum(STEP_KINDS),
   occurredAt: instantSchema,
   /** How long it took. */
-  minutes: z.number().int().min(1, "empty").max(20_160, "too-long-minutes").nullable().default(null),
+  minutes: z
+    .number()
+    .int()
+    .min(1, "empty")
+    .max(20_160, "too-long-minutes")
+    .nullable()
+    .default(null),
   inputs: z.array(stepInputSchema).min(1, "empty").max(MOST_STEP_INPUTS),
   outputs: z.array(stepOutputSchema).min(1, "empty").max(MOST_STEP_OUTPUTS),
   /** What was lost and weighed or guessed, by cause. */
@@ -126,7 +132,8 @@ export const saveStepEndpoint = endpoint({
 export const undoStepEndpoint = endpoint({
   method: "POST",
   path: "/api/steps/{id}/undo",
-  summary: "Take a step back, within ten minutes and by whoever saved it. Lots that it opened stay.",
+  summary:
+    "Take a step back, within ten minutes and by whoever saved it. Lots that it opened stay.",
   permission: "steps.record",
   input: z.object({ requestId: requestIdSchema, id: idSchema<"step">() }),
   output: z.object({ stepId: idSchema<"step">(), lots: z.array(z.number().int()) }),

@@ -1,10 +1,10 @@
 /** Everything that ever went into or out of one lot, read by the ledger's index of holders. */
 import "server-only";
 import type * as z from "zod";
-import { AppError } from "@/lib/core/errors";
 import { allow, type Context } from "@/lib/platform/context";
 import { inSnapshot, prepared, type Readable } from "@/lib/platform/database";
-import type { LotMovement, lotMovementsEndpoint } from "../contract/lots";
+import type { LotMovement, lotMovementsEndpoint, LotRecordRef } from "../contract/lots";
+import { requireLot } from "./lot-record";
 
 const PAGE = 50;
 
@@ -17,7 +17,27 @@ export const MOVEMENTS_SQL = `
    where n.holder_id = @holderId and n.entry_id <= @entryId and (n.entry_id < @entryId or n.seq < @seq)
    order by n.entry_id desc, n.seq desc limit @limit`;
 
-type Row = Omit<LotMovement, "bagCode"> & { subject: string };
+type Row = Omit<LotMovement, "bagCode" | "record"> & { subject: string };
+
+/** What a record is called, and the other lot of a move: both by the record's own key. */
+const RECORDS: Readonly<Record<string, string>> = {
+  step: "select kind as detail, null as otherNumber from steps where id = @id",
+  count: "select kind as detail, null as otherNumber from counts where id = @id",
+  "lot-move": `select x.kind as detail, l.number as otherNumber from lot_moves x
+      join lots l on l.id = case when x.from_lot_id = @lotId then x.to_lot_id else x.from_lot_id end where x.id = @id`,
+};
+const KINDS = ["weigh-in", "sorting", "step", "count", "lot-move", "removal"] as const;
+
+function recordOf(db: Readable, subject: string, lotId: string): LotRecordRef {
+  const [name = "", id = ""] = subject.split(":", 2);
+  const kind = KINDS.find((known) => known === name) ?? "other";
+  const sql = RECORDS[kind];
+  const found = sql
+    ? (prepared(db.client, sql).get({ id, lotId }) as
+        Pick<LotRecordRef, "detail" | "otherNumber"> | undefined)
+    : undefined;
+  return { kind, id, detail: found?.detail ?? null, otherNumber: found?.otherNumber ?? null };
+}
 
 /** The tag of the bag that a record concerns: that of its weigh-in or of its sorting. */
 function bagCodeOf(db: Readable, subject: string): string | null {
@@ -43,10 +63,7 @@ export function listLotMovements(
 ): z.output<typeof lotMovementsEndpoint.output> {
   allow(ctx, "stock.read");
   return inSnapshot<z.output<typeof lotMovementsEndpoint.output>>(ctx, (db) => {
-    const holderId = prepared(db.client, "select holder_id from lots where number = ?")
-      .pluck()
-      .get(input.number) as number | undefined;
-    if (holderId === undefined) throw new AppError("not-found");
+    const { holderId, lotId } = requireLot(db, input.number);
     const [entryId, seq] = (input.before ?? `${Number.MAX_SAFE_INTEGER}.0`).split(".").map(Number);
     const found = prepared(db.client, MOVEMENTS_SQL).all({
       holderId,
@@ -54,9 +71,11 @@ export function listLotMovements(
       seq,
       limit: PAGE + 1,
     }) as Row[];
-    const movements = found
-      .slice(0, PAGE)
-      .map(({ subject, ...row }): LotMovement => ({ ...row, bagCode: bagCodeOf(db, subject) }));
+    const movements = found.slice(0, PAGE).map(({ subject, ...row }): LotMovement => ({
+      ...row,
+      bagCode: bagCodeOf(db, subject),
+      record: recordOf(db, subject, lotId),
+    }));
     const last = movements.at(-1);
     return {
       movements,

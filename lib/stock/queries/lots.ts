@@ -1,11 +1,12 @@
 /** Lots: lists of them, and one with where its content came from. */
 import "server-only";
 import type * as z from "zod";
-import type { LotId } from "@/lib/core/ids";
+import type { Id, LotId } from "@/lib/core/ids";
 import type { OriginType } from "@/lib/ledger/terms";
 import { allow, type Context } from "@/lib/platform/context";
 import { inSnapshot, prepared, type Readable } from "@/lib/platform/database";
 import type { listLotsEndpoint, LotSummary } from "../contract/lots";
+import { lastSeen } from "./lot-record";
 
 const PAGE = 100;
 
@@ -13,11 +14,13 @@ const SUMMARY = `
   l.number, r.polymer, r.kind, r.colour_code as colourCode, m.form, m.wash,
   coalesce(c.name, r.colour_code) as colourName, coalesce(c.hex, '#8d9490') as colourHex,
   coalesce(c.look, 'solid') as colourLook, l.place, l.opened_at as openedAt, l.closed_at as closedAt,
+  l.closed_for as closedFor, (select name from containers where id = l.container_id) as containerName,
   coalesce(b.grams, 0) as heldGrams`;
 
 const FILTERED = `(@polymer is null or r.polymer = @polymer)
      and (@colourCode is null or r.colour_code = @colourCode) and (@kind is null or r.kind = @kind)
-     and (@form is null or m.form = @form) and (@wash is null or m.wash = @wash)`;
+     and (@form is null or m.form = @form) and (@wash is null or m.wash = @wash)
+     and (@place is null or l.place like @place escape '\\') and (@containerId is null or l.container_id = @containerId)`;
 
 /** Walks what is held, so that a thousand emptied lots cost nothing. */
 export const HELD_LOTS_SQL = `
@@ -45,22 +48,50 @@ export const OPEN_LOTS_SQL = `
    where ${FILTERED} and l.number > @after
    order by l.number limit @limit`;
 
-/** Lots that hold something, or that piles go to: by number, which is the order of opening. */
+/** Walks lots by number from where the last page ended, and stops when a page is full. */
+const walkLots = (condition: string): string => `
+  select ${SUMMARY}
+    from lots l
+    join materials m on m.id = l.material_id
+    join rows r on r.id = m.row_id
+    left join balances b on b.holder_id = l.holder_id and b.material_id = l.material_id
+    left join colours c on c.code = r.colour_code
+   where l.number > @after and ${condition} and ${FILTERED}
+   order by l.number limit @limit`;
+
+export const LOTS_SQL = {
+  held: HELD_LOTS_SQL,
+  open: OPEN_LOTS_SQL,
+  closed: walkLots("l.closed_at is not null and b.grams > 0"),
+  empty: walkLots("coalesce(b.grams, 0) = 0"),
+  all: walkLots("true"),
+} as const;
+
+/** "Rack B" anywhere in the place; what SQL's LIKE would read as a sign of its own is taken as it stands. */
+function placePattern(text: string | undefined): string | null {
+  return text ? `%${text.replace(/[\\%_]/g, (sign) => `\\${sign}`)}%` : null;
+}
+
+/** Lots by number, which is the order of opening: those that hold something unless another state is asked for. */
 export function listLots(
   ctx: Context,
   input: z.output<typeof listLotsEndpoint.input>,
 ): z.output<typeof listLotsEndpoint.output> {
   allow(ctx, "stock.read");
-  const sql = input.state === "open" ? OPEN_LOTS_SQL : HELD_LOTS_SQL;
-  const found = prepared(ctx.db.reader.client, sql).all({
+  const one = input.number;
+  const sql = LOTS_SQL[one === undefined ? input.state : "all"];
+  const walked = prepared(ctx.db.reader.client, sql).all({
     polymer: input.polymer ?? null,
     colourCode: input.colourCode ?? null,
     kind: input.kind ?? null,
     form: input.form ?? null,
     wash: input.wash ?? null,
-    after: input.after ?? 0,
-    limit: PAGE + 1,
+    place: placePattern(input.place),
+    containerId: input.containerId ?? null,
+    after: one === undefined ? (input.after ?? 0) : one - 1,
+    limit: one === undefined ? PAGE + 1 : 1,
   }) as LotSummary[];
+  const found = one === undefined ? walked : walked.filter((lot) => lot.number === one);
   const lots = found.slice(0, PAGE);
   return { lots, next: found.length > PAGE ? (lots.at(-1)?.number ?? null) : null };
 }
@@ -76,6 +107,9 @@ export type LotBag = { code: string; pointName: string | null; sortedAt: number;
 
 export type LotView = LotSummary & {
   lotId: LotId;
+  containerId: Id<"container"> | null;
+  /** Its last entry and count: a count that is sent says what was seen. */
+  seen: { entryId: number; countId: string | null };
   /** What its label's QR holds. */
   labelCode: string;
   origins: LotOrigin[];
@@ -88,7 +122,8 @@ export type LotView = LotSummary & {
 const MOST_BAGS = 12;
 
 const LOT_SQL = `
-  select l.id as lotId, l.holder_id as holderId, l.material_id as materialId, h.code as labelCode, ${SUMMARY}
+  select l.id as lotId, l.holder_id as holderId, l.material_id as materialId, h.code as labelCode,
+         l.container_id as containerId, ${SUMMARY}
     from lots l
     join holders h on h.id = l.holder_id
     join materials m on m.id = l.material_id
@@ -102,6 +137,7 @@ type LotRow = LotSummary & {
   holderId: number;
   materialId: number;
   labelCode: string;
+  containerId: Id<"container"> | null;
 };
 
 function listOrigins(db: Readable, lot: LotRow): LotOrigin[] {
@@ -159,6 +195,7 @@ export function getLot(ctx: Context, number: number): LotView | null {
     }) as (LotBag & { bagCount: number })[];
     return {
       ...summary,
+      seen: lastSeen(db, lot),
       origins: listOrigins(db, lot),
       heated: listHeated(db, lot),
       bags: bags.map(({ bagCount: _count, ...bag }) => bag),

@@ -1,6 +1,7 @@
 /** Reads of the palette. */
 import "server-only";
 import type * as z from "zod";
+import { AppError } from "@/lib/core/errors";
 import { allow, type Context } from "@/lib/platform/context";
 import { prepared, type Readable } from "@/lib/platform/database";
 import type { Colour, listColoursEndpoint, listColoursSchema } from "../contract/palette";
@@ -28,4 +29,14 @@ export function listColours(
 ): z.output<typeof listColoursEndpoint.output> {
   allow(ctx, "stock.read");
   return { items: readPalette(ctx.db.reader) };
+}
+
+/** @throws AppError `unknown-colour`, also for a retired one: a form that was open since then must look again */
+export function requireColourInUse(
+  db: Readable,
+  code: string,
+  path: readonly (string | number)[],
+): void {
+  const colour = getColour(db, code);
+  if (!colour || colour.retiredAt !== null) throw new AppError("unknown-colour", {}, path);
 }

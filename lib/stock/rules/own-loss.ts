@@ -20,7 +20,9 @@ export function lossOf(steps: readonly StepShare[]): {
   mean: number | null;
   spread: number | null;
 } {
-  const shares = steps.map(({ inputGrams, outputGrams }) => (inputGrams - outputGrams) / inputGrams);
+  const shares = steps.map(
+    ({ inputGrams, outputGrams }) => (inputGrams - outputGrams) / inputGrams,
+  );
   const count = shares.length;
   if (count === 0) return { count, mean: null, spread: null };
   const mean = shares.reduce((sum, share) => sum + share, 0) / count;

@@ -119,6 +119,9 @@ export const weighInPageSchema = correctedWeighInSchema.extend({
   recordedAt: z.number().int(),
   pointName: z.string(),
   scaleName: z.string(),
+  colourName: z.string().nullable(),
+  /** The lot that a bag of one kind went into. */
+  lotNumber: z.number().int().nullable(),
   byName: z.string(),
   corrects: z.string().nullable(),
   correction: z
@@ -130,5 +133,7 @@ export const weighInPageSchema = correctedWeighInSchema.extend({
       at: z.number().int(),
     })
     .nullable(),
+  /** What was taken since from what it had filled; empty for one that never counted. */
+  later: laterUsesSchema,
 });
 export type WeighInPage = z.output<typeof weighInPageSchema>;

@@ -6,6 +6,7 @@ import type { BagId, PersonId, PointId, ScaleId, WeighInId } from "@/lib/core/id
 import type { Kind, PolymerAnswer } from "@/lib/core/plastics";
 import type { ReadingInput } from "@/lib/core/schemas";
 import type { Instant } from "@/lib/core/time";
+import { listLaterUses } from "@/lib/ledger/queries/uses";
 import type { Basis } from "@/lib/ledger/terms";
 import { allow, type Context } from "@/lib/platform/context";
 import { inSnapshot, prepared, type Readable } from "@/lib/platform/database";
@@ -71,12 +72,17 @@ export function getWeighInPage(
   return inSnapshot(ctx, (db) => {
     const stored = getStoredWeighIn(db, id as WeighInId);
     if (!stored) return null;
-    const pointName = prepared(db.client, "select name from points where id = ?")
-      .pluck()
-      .get(stored.pointId) as string;
-    const scaleName = prepared(db.client, "select name from scales where id = ?")
-      .pluck()
-      .get(stored.scaleId) as string;
+    const names = prepared(
+      db.client,
+      `select p.name as pointName, s.name as scaleName, c.name as colourName, l.number as lotNumber
+         from weigh_ins w join points p on p.id = w.point_id join scales s on s.id = w.scale_id
+         left join colours c on c.code = w.colour_code left join lots l on l.id = w.lot_id where w.id = ?`,
+    ).get(id) as {
+      pointName: string;
+      scaleName: string;
+      colourName: string | null;
+      lotNumber: number | null;
+    };
     const correction = prepared(
       db.client,
       `select reason, replacement_id as replacementId, done_by as doneBy, at from corrections
@@ -86,8 +92,7 @@ export function getWeighInPage(
       | undefined;
     return {
       ...stored,
-      pointName,
-      scaleName,
+      ...names,
       byName: helperName(db, stored.doneBy),
       correction: correction
         ? {
@@ -97,6 +102,7 @@ export function getWeighInPage(
             at: correction.at,
           }
         : null,
+      later: stored.actId === null ? { uses: [], count: 0 } : listLaterUses(db, stored.actId),
     };
   });
 }

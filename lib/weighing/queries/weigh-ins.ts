@@ -5,14 +5,13 @@ import { formatCode, type LabelCode } from "@/lib/core/bag-code";
 import { AppError } from "@/lib/core/errors";
 import type { BagId, Id, PersonId, PointId, WeighInId } from "@/lib/core/ids";
 import type { PolymerAnswer } from "@/lib/core/plastics";
-import type { Instant } from "@/lib/core/time";
+import { dayOf, startOfDay, type Instant } from "@/lib/core/time";
 import { mayStillUndo, undoUntil } from "@/lib/core/undo";
 import { allow, requirePerson, type Context } from "@/lib/platform/context";
 import { inSnapshot, prepared, type Readable } from "@/lib/platform/database";
 import { requireScheme } from "@/lib/platform/scheme";
 import { getContainer } from "@/lib/scales/queries/scales";
 import type { Scanned, Ticket, Today, TodayInput } from "../contract/weigh-ins";
-import { startOfDay } from "../rules";
 import type { Condition, WeighInState } from "../terms";
 
 export type WeighIn = {
@@ -139,7 +138,7 @@ export function getToday(ctx: Context, input: TodayInput): Today {
   const helperId = requirePerson(ctx);
   return inSnapshot(ctx, (db) => {
     const { timeZone } = requireScheme(db);
-    const from = startOfDay(ctx.now, timeZone);
+    const from = startOfDay(dayOf(ctx.now, timeZone), timeZone);
     const sums = prepared(
       db.client,
       `select count(*) as ticketCount, count(*) filter (where state = 'posted') as bags,

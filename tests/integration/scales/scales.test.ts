@@ -1,7 +1,7 @@
 import { afterEach, beforeEach, describe, expect, it } from "vitest";
 import { newId } from "@/lib/core/ids";
 import { addScale, changeScale, restoreScale, retireScale } from "@/lib/scales/commands/scales";
-import type { ScaleData } from "@/lib/scales/contract";
+import type { ScaleData } from "@/lib/scales/contract/scales";
 import { getScale, listManagedScales, listScales } from "@/lib/scales/queries/scales";
 import { commandCases, refusalOf } from "@/tests/support/command-cases";
 import { newScheme, NOON, type TestScheme } from "@/tests/support/scheme";

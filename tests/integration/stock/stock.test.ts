@@ -6,7 +6,7 @@ import { listLotMovements, MOVEMENTS_SQL } from "@/lib/stock/queries/lot-movemen
 import { getLot, HELD_LOTS_SQL, listLots, OPEN_LOTS_SQL } from "@/lib/stock/queries/lots";
 import { CELLS_SQL, getStock, LOOSE_SQL } from "@/lib/stock/queries/stock";
 import { layOutShelf } from "@/lib/stock/rules/shelf";
-import { WAITING_SQL } from "@/lib/sorting/queries/waiting";
+import { waitingSql } from "@/lib/sorting/queries/waiting";
 import { newShed, noonOf, sorting, type Shed } from "../../support/shed";
 
 let shed: Shed;
@@ -93,13 +93,21 @@ describe("stock", () => {
     expect(cells).toContain("balances_held");
     expect(cells).not.toMatch(/SCAN (b|l|m|r)\b(?! USING COVERING INDEX balances_held)/);
     expect(plan(LOOSE_SQL, 1)).toContain("balances_held (material_id=?)");
-    const lots = { ...filter, polymer: null, colourCode: null, after: 0, limit: 10 };
+    const lots = {
+      ...filter,
+      polymer: null,
+      colourCode: null,
+      place: null,
+      containerId: null,
+      after: 0,
+      limit: 10,
+    };
     expect(plan(HELD_LOTS_SQL, lots)).toContain("balances_held");
     expect(plan(OPEN_LOTS_SQL, lots)).toContain("lots_material");
     const movements = plan(MOVEMENTS_SQL, { holderId: 1, entryId: 1, seq: 1, limit: 1 });
     expect(movements).toContain("lines_holder (holder_id=? AND entry_id<?)");
     expect(movements).not.toMatch(/SCAN/);
-    const waiting = plan(WAITING_SQL, { since: 0, id: "" });
+    const waiting = plan(waitingSql([]), { since: 0, id: "" });
     expect(waiting).toContain("bags_state_since (state=? AND state_since>?)");
     expect(waiting).not.toMatch(/SCAN/);
     for (const text of [cells, plan(HELD_LOTS_SQL, lots), plan(OPEN_LOTS_SQL, lots)]) {

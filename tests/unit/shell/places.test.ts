@@ -15,6 +15,8 @@ describe("who finds what in the navigation", () => {
       "weigh-in",
       "sorting",
       "stock",
+      "removals",
+      "scales",
       "account",
     ]);
   });
@@ -25,13 +27,17 @@ describe("who finds what in the navigation", () => {
       "weigh-in",
       "sorting",
       "stock",
+      "steps",
+      "counts",
+      "removals",
       "reports",
+      "scales",
       "account",
     ]);
   });
 
-  test("a coordinator finds all twelve", () => {
-    expect(placesFor("coordinator")).toHaveLength(12);
+  test("a coordinator finds every place", () => {
+    expect(placesFor("coordinator")).toHaveLength(16);
   });
 
   test.each(ROLES)("the bottom bar of a %s has at most four places and loses none", (role) => {

@@ -29,6 +29,7 @@ describe("what lies on the table", () => {
     const complete = { ...pile, reading: reading("1.296") };
     expect(bodyOf({ piles: [complete], rejects: [] }, [])?.piles).toEqual([
       {
+        lot: null,
         polymer: "PE-HD",
         colourCode: "blue",
         kind: "lids",
@@ -45,6 +46,12 @@ describe("what lies on the table", () => {
     ]);
     expect(bodyOf({ piles: [{ ...complete, kind: "" }], rejects: [] }, [])).toBeNull();
     expect(bodyOf({ piles: [complete], rejects: [newReject(undefined)] }, [])).toBeNull();
+  });
+
+  it("sends the lot that was chosen", () => {
+    const chosen = { ...pile, lot: "new" as const, reading: reading("1.296") };
+    expect(bodyOf({ piles: [chosen], rejects: [] }, [])?.piles[0]?.lot).toBe("new");
+    expect(newPile(chosen).lot).toBeNull();
   });
 
   it("takes tares from the list", () => {
@@ -70,22 +77,29 @@ describe("what lies on the table", () => {
 });
 
 describe("the words under the bar", () => {
+  const of = (fractions: number, bags = 1) => ({ fractions, bags });
   it("say how piles and net compare", () => {
-    expect(sumWords({ kind: "within", differenceGrams: 8 }, 3, 12_000).words).toBe(
+    expect(sumWords({ kind: "within", differenceGrams: 8 }, of(3), 12_000).words).toBe(
       "8 g left over, within what the scale can tell.",
     );
-    expect(sumWords({ kind: "within", differenceGrams: 0 }, 3, 12_000).words).toBe(
+    expect(sumWords({ kind: "within", differenceGrams: 0 }, of(3), 12_000).words).toBe(
       "All of it is on the table.",
     );
-    expect(sumWords({ kind: "needs-cause", differenceGrams: 1200 }, 1, 12_000).words).toBe(
+    expect(sumWords({ kind: "needs-cause", differenceGrams: 1200 }, of(1), 12_000).words).toBe(
       "1.200 kg still to weigh.",
     );
-    expect(sumWords({ kind: "needs-check", differenceGrams: -90 }, 1, 12_000)).toEqual({
+    expect(sumWords({ kind: "needs-check", differenceGrams: -90 }, of(1), 12_000)).toEqual({
       words: "0.090 kg more than the bag held; the scale can explain 0.012 kg.",
       tone: "warn",
     });
-    expect(sumWords({ kind: "needs-cause", differenceGrams: 2160 }, 0, 12_000).words).toBe(
+    expect(sumWords({ kind: "needs-check", differenceGrams: -90 }, of(1, 5), 12_000).words).toBe(
+      "0.090 kg more than the bags held; the scale can explain 0.012 kg.",
+    );
+    expect(sumWords({ kind: "needs-cause", differenceGrams: 2160 }, of(0), 12_000).words).toBe(
       "Weigh the first pile.",
+    );
+    expect(sumWords({ kind: "within", differenceGrams: 0 }, of(2, 0), 12_000).words).toBe(
+      "Put a bag on the table first.",
     );
   });
 });

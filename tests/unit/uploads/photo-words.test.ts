@@ -91,6 +91,10 @@ describe("what is said of a picture on its way", () => {
     }
   });
 
+  it("says how many there is room for, although the answer to an upload is a code alone", () => {
+    expect(refusalWords({ code: "photos-too-many", values: {} })).toContain("room for 12 pictures");
+  });
+
   it("counts", () => {
     expect(sendingWords(1)).toBe("1 photo being sent");
     expect(sendingWords(2)).toBe("2 photos being sent");

@@ -1,0 +1,3 @@
+export const SCANNER_HEADERS: readonly { key: string; value: string }[];
+declare const config: object;
+export default config;

@@ -1,7 +1,7 @@
 import Link from "next/link";
 import { formatKg } from "@/lib/core/mass";
 import { dayOf, formatDay } from "@/lib/core/time";
-import type { LaterUses } from "@/lib/ledger/contract";
+import type { LaterUses } from "@/lib/core/schemas";
 import type { EntryKind } from "@/lib/ledger/terms";
 
 /** What an entry did, seen from what it took from. */

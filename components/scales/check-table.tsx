@@ -54,7 +54,7 @@ export function CheckTable({ checks, timeZone }: Props) {
           cell: (check) => (
             <span className={check.passed ? "text-ok" : "font-bold text-bad"}>
               {check.passed ? "Within" : "Beyond"}
-              {check.attempt > 1 ? `, ${check.attempt}. try` : ""}
+              {check.attempt > 1 ? `, try ${check.attempt}` : ""}
             </span>
           ),
         },

@@ -20,7 +20,8 @@ type Props = {
   reasons: readonly RejectReason[];
   /** Refusals by field of the table: "piles.0.lot". */
   errors: Readonly<Record<string, string>>;
-  onDraft: (draft: Draft) => void;
+  /** null: the session is over, and it is only looked at. */
+  onDraft: ((draft: Draft) => void) | null;
 };
 
 /** Piles and rejects, their sum against what was tipped, and the scale on which they are weighed. */
@@ -37,48 +38,56 @@ export function PilesBoard({ draft, board, bagCount, lists, reasons, errors, onD
           lists={lists}
           reasons={reasons}
           errors={errors}
-          onOpen={setOpened}
+          onOpen={onDraft ? setOpened : null}
         />
       ) : null}
-      <div className="grid grid-cols-2 gap-2.5">
-        <Button
-          variant={count === 0 ? "act" : "quiet"}
-          onClick={() =>
-            setOpened({ kind: "pile", value: newPile(draft.piles.at(-1)), isNew: true })
-          }
-        >
-          Add pile
-        </Button>
-        <Button
-          variant="danger"
-          onClick={() => setOpened({ kind: "reject", value: newReject(lastReading), isNew: true })}
-        >
-          Add reject
-        </Button>
-      </div>
-      <div>
-        <SelectField
-          label="Scale"
-          value={scale?.id ?? ""}
-          onChange={(event) => onDraft(onScale(event.target.value))}
-          options={lists.scales.map(({ id, name }) => ({ value: id, label: name }))}
-        />
-        {scale ? <ScaleToday scaleId={scale.id} onScale={(id) => onDraft(onScale(id))} /> : null}
-      </div>
-      {opened ? (
-        <FractionDialogs
-          key={opened.value.id}
-          opened={opened}
-          draft={draft}
-          lists={lists}
-          scale={scale}
-          reasons={reasons}
-          onDraft={(next) => {
-            onDraft(next);
-            setOpened(null);
-          }}
-          onClose={() => setOpened(null)}
-        />
+      {onDraft ? (
+        <>
+          <div className="grid grid-cols-2 gap-2.5">
+            <Button
+              variant={count === 0 ? "act" : "quiet"}
+              onClick={() =>
+                setOpened({ kind: "pile", value: newPile(draft.piles.at(-1)), isNew: true })
+              }
+            >
+              Add pile
+            </Button>
+            <Button
+              variant="danger"
+              onClick={() =>
+                setOpened({ kind: "reject", value: newReject(lastReading), isNew: true })
+              }
+            >
+              Add reject
+            </Button>
+          </div>
+          <div>
+            <SelectField
+              label="Scale"
+              value={scale?.id ?? ""}
+              onChange={(event) => onDraft(onScale(event.target.value))}
+              options={lists.scales.map(({ id, name }) => ({ value: id, label: name }))}
+            />
+            {scale ? (
+              <ScaleToday scaleId={scale.id} onScale={(id) => onDraft(onScale(id))} />
+            ) : null}
+          </div>
+          {opened ? (
+            <FractionDialogs
+              key={opened.value.id}
+              opened={opened}
+              draft={draft}
+              lists={lists}
+              scale={scale}
+              reasons={reasons}
+              onDraft={(next) => {
+                onDraft(next);
+                setOpened(null);
+              }}
+              onClose={() => setOpened(null)}
+            />
+          ) : null}
+        </>
       ) : null}
     </>
   );

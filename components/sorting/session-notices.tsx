@@ -16,8 +16,8 @@ export function namesTogether(names: readonly string[]): string {
 
 type Props = {
   state: SessionState;
-  /** Of a session that is over: its own record; null when it was given up, undefined while not known. */
-  savedId: string | null | undefined;
+  /** Of the session, and of its record once it is saved. */
+  id: string;
   onTakeOff: (code: string) => void;
   onTakeAside: () => void;
   /** What is typed goes on as a session of its own. */
@@ -25,7 +25,7 @@ type Props = {
 };
 
 /** Who else is here, and what keeps the table from being kept or saved. */
-export function SessionNotices({ state, savedId, onTakeOff, onTakeAside, onGoOn }: Props) {
+export function SessionNotices({ state, id, onTakeOff, onTakeAside, onGoOn }: Props) {
   const { others, refused, aside, over } = state;
   return (
     <>
@@ -37,23 +37,23 @@ export function SessionNotices({ state, savedId, onTakeOff, onTakeAside, onGoOn 
       {over ? (
         <Notice
           tone="warn"
-          title={savedId ? "Saved by somebody else" : "This session is over"}
+          title={over === "saved" ? "It was saved meanwhile" : "It was given up meanwhile"}
           live="alert"
           action={
-            savedId ? (
-              <ButtonLink href={`/sorting/sessions/${savedId}`} size="small">
+            over === "saved" ? (
+              <ButtonLink href={`/sorting/sessions/${id}`} size="small">
                 See what was saved
               </ButtonLink>
-            ) : savedId === null ? (
+            ) : (
               <Button size="small" onClick={onGoOn}>
                 Go on with this
               </Button>
-            ) : null
+            )
           }
         >
-          {savedId
+          {over === "saved"
             ? "The first to save counts. What you typed is still here and was not saved; compare it with what was."
-            : "It was given up or saved elsewhere. What you typed is still here and was not saved."}
+            : "Its bags wait again. What you typed is still here and was not saved."}
         </Notice>
       ) : null}
       {refused ? (

@@ -12,6 +12,8 @@ export type Base = { version: number; table: Table };
 /** A bag that cannot lie on this table: sorted already, on another table, not weighed. */
 export type RefusedBag = { code: string; why: "sorted" | "elsewhere" | "other"; sentence: string };
 
+export type Ended = "saved" | "given-up";
+
 export type SessionState = {
   table: Table;
   base: Base;
@@ -22,8 +24,8 @@ export type SessionState = {
   /** What was not chosen. */
   aside: Table | null;
   refused: RefusedBag | null;
-  /** It was saved or given up: nothing typed here is kept on the server any more. */
-  over: boolean;
+  /** How it ended: from then on nothing typed here is kept on the server. null: it goes on. */
+  over: Ended | null;
   /** The last sending was answered. */
   reached: boolean;
   /** Names of others who have it open. */
@@ -45,7 +47,7 @@ export type Heard =
   /** The draft as the server has it now. */
   | { kind: "met"; answer: SortingDraft }
   | { kind: "unreached" }
-  | { kind: "over" }
+  | { kind: "over"; how: Ended }
   | { kind: "refused"; bag: RefusedBag }
   | { kind: "chose"; which: "mine" | "theirs" | "both" }
   | { kind: "took-aside" };
@@ -59,7 +61,7 @@ export function openedState(table: Table, base: Base = NOTHING_KEPT): SessionSta
     theirs: null,
     aside: null,
     refused: null,
-    over: false,
+    over: null,
     reached: true,
     others: [],
   };
@@ -105,7 +107,7 @@ export function hear(state: SessionState, heard: Heard): SessionState {
     case "unreached":
       return { ...state, reached: false };
     case "over":
-      return { ...state, over: true, reached: true, theirs: null, refused: null, others: [] };
+      return { ...state, over: heard.how, reached: true, theirs: null, refused: null, others: [] };
     case "refused":
       return { ...state, refused: heard.bag, reached: true };
     case "chose":

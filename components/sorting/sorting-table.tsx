@@ -1,8 +1,7 @@
 "use client";
 
-import { useQueryClient } from "@tanstack/react-query";
 import { useRouter } from "next/navigation";
-import { useEffect, useMemo, useRef, useState } from "react";
+import { useEffect, useRef, useState } from "react";
 import { useCommand } from "@/components/forms/use-command";
 import { ActionBar } from "@/components/ui/action-bar";
 import { Button } from "@/components/ui/button";
@@ -42,7 +41,6 @@ type Answer = { cause: LossCause | null; confirmedAbove: boolean };
 /** Bags are tipped out: piles and rejects are weighed until they add up to what the bags held. */
 export function SortingTable({ id, session, helperId, timeZone, lists, reasons }: Props) {
   const router = useRouter();
-  const cache = useQueryClient();
   const save = useCommand<typeof closeSortingEndpoint>(CLOSE_SORTING_ADDRESS);
   const [asking, setAsking] = useState(false);
   const [offline, setOffline] = useState(false);
@@ -52,20 +50,13 @@ export function SortingTable({ id, session, helperId, timeZone, lists, reasons }
   const found = useBags(codes);
   const board = boardOf(draft, found.bags ?? [], lists, found.known[0]?.scaleId ?? null);
   const { scale, body, count, judged } = board;
-  const first = found.known[0];
 
   const { over } = state;
-  useEffect(() => {
-    if (over) void cache.invalidateQueries({ queryKey: ["sorting", "bag"] });
-  }, [over, cache]);
-  const savedId = useMemo(() => {
-    if (!over || !first || found.bags === null) return undefined;
-    return found.known.find(({ sorted }) => sorted?.sortingId === id)?.sorted?.sortingId ?? null;
-  }, [over, first, found, id]);
+  const untouched = over === "saved" && count === 0;
   useEffect(() => {
     // Nothing of one's own would be lost: straight to what was saved.
-    if (savedId && count === 0) router.replace(`/sorting/sessions/${savedId}`);
-  }, [savedId, count, router]);
+    if (untouched) router.replace(`/sorting/sessions/${id}`);
+  }, [untouched, id, router]);
 
   function change(next: Draft) {
     session.type({ codes, draft: next });
@@ -134,7 +125,7 @@ export function SortingTable({ id, session, helperId, timeZone, lists, reasons }
         <div className="grid min-w-0 gap-4">
           <SessionNotices
             state={state}
-            savedId={savedId}
+            id={id}
             onTakeOff={(code) => changeCodes(codes.filter((other) => other !== code))}
             onTakeAside={session.takeAside}
             onGoOn={goOn}
@@ -161,7 +152,7 @@ export function SortingTable({ id, session, helperId, timeZone, lists, reasons }
             codes={codes}
             known={found.known}
             refused={state.refused}
-            onCodes={changeCodes}
+            onCodes={over ? null : changeCodes}
           />
           <SortingPhotos
             id={id}

@@ -15,7 +15,8 @@ type Props = {
   /** Those that are known so far. */
   known: readonly BagToSort[];
   refused: RefusedBag | null;
-  onCodes: (codes: readonly string[]) => void;
+  /** null: the session is over. */
+  onCodes: ((codes: readonly string[]) => void) | null;
 };
 
 /** The bags that were tipped onto the table. */
@@ -27,14 +28,16 @@ export function TableBags({ codes, known, refused, onCodes }: Props) {
         <h2 className="font-body text-sm font-bold text-soft">
           {codes.length === 1 ? "1 bag on the table" : `${codes.length} bags on the table`}
         </h2>
-        <Button
-          variant="link"
-          size="small"
-          disabled={codes.length >= MOST_BAGS}
-          onClick={() => setAdding(true)}
-        >
-          Add a bag
-        </Button>
+        {onCodes ? (
+          <Button
+            variant="link"
+            size="small"
+            disabled={codes.length >= MOST_BAGS}
+            onClick={() => setAdding(true)}
+          >
+            Add a bag
+          </Button>
+        ) : null}
       </div>
       {codes.length > 0 ? (
         <Ticket padding="none">
@@ -62,7 +65,7 @@ export function TableBags({ codes, known, refused, onCodes }: Props) {
                     {bag ? formatKg(bag.netGrams) : "–"}
                     <span className="sr-only"> kg</span>
                   </span>
-                  {codes.length > 1 || wrong ? (
+                  {onCodes && (codes.length > 1 || wrong) ? (
                     <Button
                       variant="link"
                       size="small"
@@ -80,7 +83,7 @@ export function TableBags({ codes, known, refused, onCodes }: Props) {
           </ul>
         </Ticket>
       ) : null}
-      {adding ? (
+      {adding && onCodes ? (
         <AddBagDialog
           codes={codes}
           onAdd={(code) => onCodes([...codes, code])}

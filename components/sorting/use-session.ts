@@ -77,6 +77,14 @@ export function useSession(id: string, helperId: string | null, first: readonly 
     setState(latest.current);
   }, []);
 
+  const sayOver = useCallback(
+    ({ code, values }: ProblemDocument) => {
+      if (code !== "draft-over") return;
+      say({ kind: "over", how: values.state === "saved" ? "saved" : "given-up" });
+    },
+    [say],
+  );
+
   useEffect(() => {
     if (helperId === null) return;
     let left = false;
@@ -88,13 +96,13 @@ export function useSession(id: string, helperId: string | null, first: readonly 
       if (kept) say({ kind: "restored", table: kept.table, base: kept.base });
       if (result?.kind === "done") say({ kind: "met", answer: result.answer });
       else if (result?.kind === "unreachable") say({ kind: "unreached" });
-      else if (result?.problem.code === "draft-over") say({ kind: "over" });
+      else if (result?.kind === "refused") sayOver(result.problem);
       setReady(true);
     });
     return () => {
       left = true;
     };
-  }, [id, helperId, isNew, say]);
+  }, [id, helperId, isNew, say, sayOver]);
 
   useEffect(() => {
     if (!ready || helperId === null || forgotten.current) return;
@@ -118,10 +126,10 @@ export function useSession(id: string, helperId: string | null, first: readonly 
       say({ kind: "unreached" });
       return "unreachable";
     }
-    if (result.problem.code === "draft-over") say({ kind: "over" });
-    else if (result.problem.code === "draft-overtaken") {
+    if (result.problem.code === "draft-over" || result.problem.code === "draft-overtaken") {
       const met = await openDraft(id);
       if (met.kind === "done") say({ kind: "met", answer: met.answer });
+      else if (met.kind === "refused") sayOver(met.problem);
     } else {
       const bag = refusedBag(result.problem, table.codes);
       say({
@@ -130,7 +138,7 @@ export function useSession(id: string, helperId: string | null, first: readonly 
       });
     }
     return "stopped";
-  }, [id, say]);
+  }, [id, say, sayOver]);
 
   /** One sending at a time: the next builds on the version that the last one made. */
   const keep = useCallback(async (): Promise<Kept> => {
@@ -165,7 +173,7 @@ export function useSession(id: string, helperId: string | null, first: readonly 
         if (sending.current) return;
         if (result.kind === "done") say({ kind: "met", answer: result.answer });
         else if (result.kind === "unreachable") say({ kind: "unreached" });
-        else if (result.problem.code === "draft-over" && !forgotten.current) say({ kind: "over" });
+        else if (!forgotten.current) sayOver(result.problem);
       });
     };
     const timer = setInterval(look, PRESENT_MS);
@@ -174,7 +182,7 @@ export function useSession(id: string, helperId: string | null, first: readonly 
       clearInterval(timer);
       document.removeEventListener("visibilitychange", look);
     };
-  }, [ready, over, started, id, say]);
+  }, [ready, over, started, id, say, sayOver]);
 
   return {
     state,
@@ -189,8 +197,9 @@ export function useSession(id: string, helperId: string | null, first: readonly 
     keep,
     hearRefusal: useCallback(
       (problem: ProblemDocument) => {
-        if (problem.code === "request-id-reused" || problem.code === "draft-over") {
-          say({ kind: "over" });
+        // This session was saved: by somebody else, or by a sending whose answer was lost.
+        if (problem.code === "request-id-reused") {
+          say({ kind: "over", how: "saved" });
           return;
         }
         const bag = refusedBag(problem, latest.current.table.codes);

@@ -8,7 +8,6 @@ import { Button } from "@/components/ui/button";
 import { Skeleton } from "@/components/ui/skeleton";
 import { useCommand } from "@/components/forms/use-command";
 import { formatKg } from "@/lib/core/mass";
-import type { Instant } from "@/lib/core/time";
 import type { LotSummary } from "@/lib/stock/contract/lots";
 import type { correctStepEndpoint, saveStepEndpoint } from "@/lib/stock/contract/steps";
 import { STEP_KIND_NAMES } from "@/lib/stock/terms";
@@ -122,9 +121,9 @@ export function StepWizard({ helperId, from, correcting }: Props) {
     const open = sums.verdict.kind === "needs-cause" || sums.verdict.kind === "needs-check";
     if (!content || open || (correcting && reason.trim().length < 3)) return;
     if (correcting) {
-      const occurredAt = correcting.occurredAt as Instant;
+      const { occurredAt } = correcting;
       const result = await correct.send({
-        id: correcting.id as never,
+        id: correcting.id,
         reason,
         replacement: { ...content, occurredAt },
       });
@@ -133,7 +132,7 @@ export function StepWizard({ helperId, from, correcting }: Props) {
       } else if (result.kind === "refused") setStage(stageOf(result.problem));
       return;
     }
-    const result = await save.send({ ...content, occurredAt: Date.now() as Instant });
+    const result = await save.send({ ...content, occurredAt: Date.now() });
     if (result.kind === "done") {
       writeStepDraft(helperId, null);
       router.push(`/steps/${result.receipt.stepId}`);

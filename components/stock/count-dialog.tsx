@@ -6,7 +6,6 @@ import { Button } from "@/components/ui/button";
 import { ChoiceTiles } from "@/components/ui/choice-tiles";
 import { Dialog } from "@/components/ui/dialog";
 import { Notice } from "@/components/ui/notice";
-import type { Instant } from "@/lib/core/time";
 import { formatKg } from "@/lib/core/mass";
 import type { countLotEndpoint, CountReceipt } from "@/lib/stock/contract/counts";
 import { COUNT } from "./addresses";
@@ -25,6 +24,8 @@ type Props = {
   onSaved: (receipt: CountReceipt) => void;
   onClose: () => void;
 };
+
+const rightNow = (): number => Date.now();
 
 const MEANWHILE = ["lot-counted-meanwhile", "lot-moved-meanwhile"] as const;
 
@@ -50,7 +51,7 @@ export function CountDialog({ lot, found, onSaved, onClose }: Props) {
     if (!counted) return;
     const result = await count.send({
       number: lot.number,
-      occurredAt: Date.now() as Instant,
+      occurredAt: rightNow(),
       counted,
       seen: lot.seen,
       confirmed,

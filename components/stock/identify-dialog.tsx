@@ -14,7 +14,6 @@ import {
   type Kind,
   type Polymer,
 } from "@/lib/core/plastics";
-import type { Instant } from "@/lib/core/time";
 import type { identifyLotEndpoint, MoveReceipt } from "@/lib/stock/contract/moves";
 import { IDENTIFY_METHOD_NAMES, IDENTIFY_METHODS, type IdentifyMethod } from "@/lib/stock/terms";
 import { ColourTiles } from "../weighing/colour-tiles";
@@ -66,7 +65,7 @@ export function IdentifyDialog({ lot, onSaved, onClose }: Props) {
     if (polymer === "" || method === "" || !sent) return;
     const result = await identify.send({
       number: lot.number,
-      occurredAt: Date.now() as Instant,
+      occurredAt: Date.now(),
       polymer,
       kind,
       colourCode,

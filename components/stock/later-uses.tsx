@@ -1,7 +1,7 @@
 import type * as z from "zod";
 import { Notice } from "@/components/ui/notice";
 import { formatKg } from "@/lib/core/mass";
-import type { laterUsesSchema } from "@/lib/ledger/contract";
+import type { laterUsesSchema } from "@/lib/core/schemas";
 import { ENTRY_WORDS, isEntryKind } from "@/lib/stock/rules/entry-words";
 
 type Props = { later: z.output<typeof laterUsesSchema>; title: string };

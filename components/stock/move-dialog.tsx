@@ -6,7 +6,6 @@ import { Button } from "@/components/ui/button";
 import { Dialog } from "@/components/ui/dialog";
 import { TextField } from "@/components/ui/text-field";
 import { formatKg } from "@/lib/core/mass";
-import type { Instant } from "@/lib/core/time";
 import type { LotSummary } from "@/lib/stock/contract/lots";
 import type { mergeLotEndpoint, MoveReceipt, splitLotEndpoint } from "@/lib/stock/contract/moves";
 import { AmountFields, sentAmount, type AmountValue } from "./amount-fields";
@@ -52,7 +51,7 @@ export function MoveDialog({ lot, kind, onSaved, onClose }: Props) {
   async function send() {
     setAsked(true);
     const count = left.found === "" ? null : sentFound(left, lists);
-    const base = { number: lot.number, occurredAt: Date.now() as Instant, count };
+    const base = { number: lot.number, occurredAt: Date.now(), count };
     if (kind === "merge") {
       const sent = sentAmount(amount, lists);
       if (!to || !sent) return;

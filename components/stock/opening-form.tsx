@@ -23,7 +23,6 @@ import {
   type PolymerAnswer,
   type WashState,
 } from "@/lib/core/plastics";
-import type { Instant } from "@/lib/core/time";
 import type { CountReceipt, openStockEndpoint } from "@/lib/stock/contract/counts";
 import { OPENING } from "./addresses";
 import { BinWeighing } from "./bin-weighing";
@@ -60,7 +59,7 @@ function Fields() {
       wash,
       place,
       sheet,
-      occurredAt: Date.now() as Instant,
+      occurredAt: Date.now(),
     });
     if (result.kind !== "done") return;
     setDone(result.receipt);

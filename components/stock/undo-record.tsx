@@ -34,7 +34,7 @@ export function UndoRecord({ path, id, until, what, onUndone }: Props) {
   }, [until]);
 
   async function press() {
-    const result = await undo.send({ id } as never);
+    const result = await undo.send({ id });
     if (result.kind !== "done") return;
     onUndone?.();
     router.refresh();

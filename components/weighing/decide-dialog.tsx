@@ -7,7 +7,7 @@ import { Button } from "@/components/ui/button";
 import { Dialog } from "@/components/ui/dialog";
 import { formatCode } from "@/lib/core/bag-code";
 import { formatKg } from "@/lib/core/mass";
-import type { LaterUses } from "@/lib/ledger/contract";
+import type { LaterUses } from "@/lib/core/schemas";
 import {
   acceptReadingEndpoint,
   discardReadingEndpoint,

@@ -51,3 +51,21 @@ export const readingSchema = z.object({
   sackTareMilligrams: milligramsSchema,
 });
 export type ReadingInput = z.output<typeof readingSchema>;
+
+/** What was taken later from what a corrected act had filled: named to whoever corrects. */
+export const laterUsesSchema = z.object({
+  /** Records that took from what it had filled, oldest first; `count` may be more. */
+  uses: z.array(
+    z.object({
+      entryId: z.number().int(),
+      /** The ledger's kind of entry. */
+      kind: z.string(),
+      /** "step:<id>" */
+      subject: z.string(),
+      occurredAt: instantSchema,
+      grams: z.number().int(),
+    }),
+  ),
+  count: z.number(),
+});
+export type LaterUses = z.output<typeof laterUsesSchema>;

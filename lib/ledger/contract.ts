@@ -2,7 +2,6 @@
 import * as z from "zod";
 import { endpoint } from "@/lib/core/endpoint";
 import { instantSchema, requestIdSchema } from "@/lib/core/schemas";
-import { ENTRY_KINDS } from "./terms";
 
 export const verificationSchema = z.object({
   ok: z.boolean(),
@@ -53,20 +52,3 @@ export const verifyEndpoint = endpoint({
   input: verifySchema,
   output: lastVerificationSchema,
 });
-
-/** What was taken later from what a corrected act had filled: named to whoever corrects. */
-export const laterUsesSchema = z.object({
-  /** Records that took from what it had filled, oldest first; `count` may be more. */
-  uses: z.array(
-    z.object({
-      entryId: z.number().int(),
-      kind: z.enum(ENTRY_KINDS),
-      /** "step:<id>" */
-      subject: z.string(),
-      occurredAt: instantSchema,
-      grams: z.number().int(),
-    }),
-  ),
-  count: z.number(),
-});
-export type LaterUses = z.output<typeof laterUsesSchema>;

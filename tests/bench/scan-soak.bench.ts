@@ -30,11 +30,18 @@ const LEAST_READS_A_MINUTE = 60 / SECONDS_EACH / 2;
 
 type Memory = { page: number; worker: number; renderer: number; all: number };
 
-/** Resident memory of a process, in bytes. */
-function resident(pid: number): number {
+/**
+ * Memory that a process filled itself, in bytes: anonymous pages and memory shared with its siblings, by its share.
+ * Not the program's code: that counts less while another browser of the machine has it mapped too.
+ */
+function filled(pid: number): number {
   const rollup = fs.readFileSync(`/proc/${pid}/smaps_rollup`, "utf8");
-  // The proportional share: pages that several processes hold count once altogether.
-  return Number(/^Pss:\s+(\d+) kB/m.exec(rollup)?.[1] ?? 0) * 1024;
+  const kib = (field: string): number => {
+    const found = new RegExp(`^${field}:\\s+(\\d+) kB`, "m").exec(rollup)?.[1];
+    if (found === undefined) throw new Error(`no ${field} in smaps_rollup`);
+    return Number(found);
+  };
+  return (kib("Pss_Anon") + kib("Pss_Shmem")) * 1024;
 }
 
 /** JS heap of the scanner's worker after a collection, in bytes: CDP to a target inside the page's session. */
@@ -70,7 +77,7 @@ async function once(browser: Browser, cdp: CDPSession, worker: string): Promise<
   const whole = await browser.newBrowserCDPSession();
   const { processInfo } = await whole.send("SystemInfo.getProcessInfo");
   await whole.detach();
-  const sizes = processInfo.map(({ id, type }) => ({ type, bytes: resident(id) }));
+  const sizes = processInfo.map(({ id, type }) => ({ type, bytes: filled(id) }));
   const sum = (of: (type: string) => boolean) =>
     sizes.filter(({ type }) => of(type)).reduce((a, { bytes }) => a + bytes, 0);
   return {

@@ -1,5 +1,4 @@
 /** Photos of bags and lots: before and after the ticket, through bad signal and bad files, looked at and removed. */
-
 import { expect, test, type Page } from "@playwright/test";
 import { newId } from "@/lib/core/ids";
 import { startE2eServer, type E2eServer } from "../support/e2e-server";

@@ -1,7 +1,7 @@
 /** What was taken later from what an act filled: named before and after a correction. */
 import "server-only";
 import { prepared, type Readable } from "@/lib/platform/database";
-import type { LaterUses } from "../contract";
+import type { LaterUses } from "@/lib/core/schemas";
 
 /** Later uses that a screen names one by one; a longer list says how many more there are. */
 const MOST_NAMED = 20;

@@ -7,11 +7,11 @@ import {
   codeSchema,
   idSchema,
   instantSchema,
+  laterUsesSchema,
   readingSchema,
   reasonSchema,
   requestIdSchema,
 } from "@/lib/core/schemas";
-import { laterUsesSchema } from "@/lib/ledger/contract";
 import { LOSS_CAUSES } from "@/lib/ledger/terms";
 import { SCALE_CLASSES } from "@/lib/scales/terms";
 import { CONDITIONS } from "@/lib/weighing/terms";

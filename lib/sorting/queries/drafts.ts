@@ -82,7 +82,7 @@ export function readDraft(
 ): SortingDraft {
   const row = prepared(db.client, `select ${DRAFT} where d.id = ?`).get(draftId) as Row | undefined;
   if (!row) throw new AppError("not-found");
-  if (row.state !== "open") throw new AppError("draft-over");
+  if (row.state !== "open") throw new AppError("draft-over", { state: row.state });
   const { id, version, content, startedAt, changedAt } = row;
   return {
     id,

@@ -4,7 +4,7 @@ import type { LabelCode } from "@/lib/core/bag-code";
 import type { BagId, ScaleId, SortingId, WeighInId } from "@/lib/core/ids";
 import type { Instant } from "@/lib/core/time";
 import { judgeUndo, undoUntil } from "@/lib/core/undo";
-import type { LaterUses } from "@/lib/ledger/contract";
+import type { LaterUses } from "@/lib/core/schemas";
 import { heldBy, takenSince } from "@/lib/ledger/queries/entries";
 import { listLaterUses } from "@/lib/ledger/queries/uses";
 import { UNSORTED, type LossCause } from "@/lib/ledger/terms";

@@ -5,11 +5,11 @@ import { FORMS, KINDS, POLYMER_ANSWERS, WASH_STATES } from "@/lib/core/plastics"
 import {
   idSchema,
   instantSchema,
+  laterUsesSchema,
   lineSchema,
   reasonSchema,
   requestIdSchema,
 } from "@/lib/core/schemas";
-import { laterUsesSchema } from "@/lib/ledger/contract";
 import { BASES } from "@/lib/ledger/terms";
 import { COUNT_KINDS, RECORD_STATES } from "../terms";
 import { foundSchema, lotNumberSchema, weighedSchema } from "./weighed";

@@ -2,8 +2,13 @@
 import * as z from "zod";
 import { endpoint } from "@/lib/core/endpoint";
 import { KINDS, POLYMERS } from "@/lib/core/plastics";
-import { idSchema, instantSchema, reasonSchema, requestIdSchema } from "@/lib/core/schemas";
-import { laterUsesSchema } from "@/lib/ledger/contract";
+import {
+  idSchema,
+  instantSchema,
+  laterUsesSchema,
+  reasonSchema,
+  requestIdSchema,
+} from "@/lib/core/schemas";
 import { IDENTIFY_METHODS, MOVE_KINDS, RECORD_STATES } from "../terms";
 import {
   amountSchema,

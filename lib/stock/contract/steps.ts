@@ -5,11 +5,11 @@ import { FORMS, KINDS, POLYMER_ANSWERS, WASH_STATES } from "@/lib/core/plastics"
 import {
   idSchema,
   instantSchema,
+  laterUsesSchema,
   readingSchema,
   reasonSchema,
   requestIdSchema,
 } from "@/lib/core/schemas";
-import { laterUsesSchema } from "@/lib/ledger/contract";
 import { LOSS_CAUSES } from "@/lib/ledger/terms";
 import {
   MOST_READINGS,

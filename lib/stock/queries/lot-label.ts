@@ -4,7 +4,7 @@ import type * as z from "zod";
 import { getLabel } from "@/lib/bags/queries";
 import { formatCode, type LabelCode } from "@/lib/core/bag-code";
 import { AppError } from "@/lib/core/errors";
-import type { Id, LotId } from "@/lib/core/ids";
+import type { LotId } from "@/lib/core/ids";
 import { allow, type Context } from "@/lib/platform/context";
 import { inSnapshot, prepared, type Readable } from "@/lib/platform/database";
 import type { lotByLabelEndpoint } from "../contract/lot-care";
@@ -24,7 +24,7 @@ export function findLotByLabel(db: Readable, code: LabelCode): LotRecord | null 
     "select id from lots where container_id = ? and closed_at is null order by number desc limit 1",
   )
     .pluck()
-    .get(label.subject as Id<"container">) as LotId | undefined;
+    .get(label.subject) as LotId | undefined;
   return lotId === undefined ? null : lotOf(db, lotId);
 }
 

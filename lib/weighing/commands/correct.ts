@@ -7,7 +7,7 @@ import type { BagState } from "@/lib/bags/terms";
 import { AppError } from "@/lib/core/errors";
 import type { WeighInId } from "@/lib/core/ids";
 import type { Instant } from "@/lib/core/time";
-import type { LaterUses } from "@/lib/ledger/contract";
+import type { LaterUses } from "@/lib/core/schemas";
 import { correctAct, postAct } from "@/lib/ledger/commands/post";
 import { listLaterUses } from "@/lib/ledger/queries/uses";
 import { allow, requirePerson, type Context } from "@/lib/platform/context";

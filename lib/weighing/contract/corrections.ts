@@ -6,11 +6,11 @@ import { KINDS, POLYMER_ANSWERS } from "@/lib/core/plastics";
 import {
   idSchema,
   instantSchema,
+  laterUsesSchema,
   readingSchema,
   reasonSchema,
   requestIdSchema,
 } from "@/lib/core/schemas";
-import { laterUsesSchema } from "@/lib/ledger/contract";
 import { BASES } from "@/lib/ledger/terms";
 import { CONDITIONS, MOST_READINGS, WEIGH_IN_STATES } from "../terms";
 

@@ -122,8 +122,8 @@ describe("keeping it on the server", () => {
 
   it("ends when the session was saved or given up, and what is typed stays", () => {
     const more = tableOf(["A"], pile("1", "1.2"), pile("2", "0.5"));
-    const state = hear(typed(opened(), more), { kind: "over" });
-    expect(state.table).toEqual(more);
+    const state = hear(typed(opened(), more), { kind: "over", how: "given-up" });
+    expect(state).toMatchObject({ table: more, over: "given-up" });
     expect(maySend(state)).toBe(false);
   });
 

@@ -11,7 +11,7 @@ import { PATTERNS } from "../stock/patterns";
 
 /** What came out of a bag on the sorting table, with the lots it went into. */
 export function ShedBagSorted({ sorted, timeZone }: { sorted: SortedBag; timeZone: string }) {
-  const { fractions, differenceGrams, cause, byName, recordedAt } = sorted;
+  const { sortingId, fractions, differenceGrams, cause, byName, recordedAt } = sorted;
   const lots = [...new Set(fractions.flatMap(({ pile }) => (pile ? [pile.lotNumber] : [])))];
   return (
     <Ticket
@@ -24,6 +24,12 @@ export function ShedBagSorted({ sorted, timeZone }: { sorted: SortedBag; timeZon
           <p className="text-sm text-soft">
             {formatDay(dayOf(instant(recordedAt), timeZone))}, {byName}
           </p>
+          <Link
+            href={`/sorting/sessions/${sortingId}`}
+            className="link -mb-2 inline-flex min-h-11 items-center text-sm font-bold"
+          >
+            See the sorting
+          </Link>
         </div>
       }
     >

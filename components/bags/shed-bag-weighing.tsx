@@ -1,5 +1,6 @@
 "use client";
 
+import Link from "next/link";
 import { useMemo } from "react";
 import { Ticket } from "@/components/ui/ticket";
 import { WeightDisplay } from "@/components/ui/weight-display";
@@ -57,6 +58,12 @@ export function ShedBagWeighing({ weighIn, at, of, timeZone, helperId, mayRemove
             <span className="block text-soft">
               {what}, {CONDITION_NAMES[condition].toLowerCase()}
             </span>
+            <Link
+              href={`/weigh-ins/${id}`}
+              className="link -mb-2 inline-flex min-h-11 items-center font-bold"
+            >
+              See the ticket
+            </Link>
           </p>
         </div>
       }

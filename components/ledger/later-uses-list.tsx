@@ -2,10 +2,9 @@ import Link from "next/link";
 import { formatKg } from "@/lib/core/mass";
 import { dayOf, formatDay } from "@/lib/core/time";
 import type { LaterUses } from "@/lib/core/schemas";
-import type { EntryKind } from "@/lib/ledger/terms";
 
 /** What an entry did, seen from what it took from. */
-const TAKEN: Partial<Record<EntryKind, string>> = {
+const TAKEN: Partial<Record<string, string>> = {
   sort: "Sorted",
   step: "Went into a step",
   identify: "Identified",

@@ -55,7 +55,8 @@ export function SortedTicket({ session, when }: Props) {
           <p
             className={`font-mono text-3xl font-bold ${stands ? "" : "text-soft line-through decoration-2"}`}
           >
-            {formatKg(netGrams)} <span className="font-body text-lg">kg</span>
+            {formatKg(netGrams)}
+            <span className="font-body text-lg tracking-normal">&nbsp;kg</span>
           </p>
           <p className="text-sm text-soft">{when}</p>
         </div>

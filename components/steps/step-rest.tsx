@@ -31,20 +31,6 @@ export function StepRest({ kind, draft, onDraft, sums, asked, errors }: Props) {
   const more = verdict.kind === "needs-check" || (draft.confirmed && verdict.kind === "gain");
   return (
     <div className="grid gap-5">
-      <fieldset className="grid gap-3 wide:grid-cols-2">
-        <legend className="mb-1.5 text-sm font-bold text-soft">
-          Lost and weighed; leave empty what was not weighed
-        </legend>
-        {causes.map((cause) => (
-          <WeightField
-            key={cause}
-            label={LOSS_CAUSE_NAMES[cause]}
-            text={kgOf(cause)}
-            onText={(kg) => lose(cause, kg)}
-            optional
-          />
-        ))}
-      </fieldset>
       {missing ? (
         <ChoiceTiles
           legend="Where did the rest go?"
@@ -71,6 +57,20 @@ export function StepRest({ kind, draft, onDraft, sums, asked, errors }: Props) {
           }
         />
       ) : null}
+      <fieldset className="grid gap-3 wide:grid-cols-2">
+        <legend className="mb-1.5 text-sm font-bold text-soft">
+          Lost and weighed; leave empty what was not weighed
+        </legend>
+        {causes.map((cause) => (
+          <WeightField
+            key={cause}
+            label={LOSS_CAUSE_NAMES[cause]}
+            text={kgOf(cause)}
+            onText={(kg) => lose(cause, kg)}
+            optional
+          />
+        ))}
+      </fieldset>
       <TextField
         label="How long did it take?"
         inputMode="numeric"

@@ -105,7 +105,7 @@ export function LotRecords({ counts, moves, number, timeZone, mayCorrect }: Prop
                 },
                 {
                   key: "act",
-                  header: "",
+                  header: "If wrong",
                   cell: (count) =>
                     count.state !== "posted" ? null : count.undoUntil !== null ? (
                       <UndoRecord
@@ -178,7 +178,7 @@ export function LotRecords({ counts, moves, number, timeZone, mayCorrect }: Prop
                 { key: "kg", header: "kg", align: "figure", cell: ({ grams }) => formatKg(grams) },
                 {
                   key: "act",
-                  header: "",
+                  header: "If wrong",
                   cell: (move) =>
                     move.state !== "posted" ? null : move.undoUntil !== null ? (
                       <UndoRecord

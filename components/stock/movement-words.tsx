@@ -25,14 +25,19 @@ function recordWords({ kind, grams, record }: LotMovement): string {
   return isEntryKind(kind) ? ENTRY_WORDS[kind] : kind;
 }
 
-/** The page of the record; a count stands on the lot's own page. */
+const PAGES: Partial<Record<LotMovement["record"]["kind"], string>> = {
+  step: "/steps",
+  sorting: "/sorting/sessions",
+  "weigh-in": "/weigh-ins",
+  removal: "/removals",
+};
+
+/** The page of the record, or the other lot of a move; a count stands on the lot's own page. */
 function recordHref({ record }: LotMovement): Route | null {
-  const { kind, id, otherNumber } = record;
-  if (kind === "step") return `/steps/${id}`;
-  if (kind === "sorting") return `/sorting/sessions/${id}`;
-  if (kind === "weigh-in") return `/weigh-ins/${id}`;
-  if (kind === "removal") return `/removals/${id}`;
-  return otherNumber === null ? null : `/stock/lots/${otherNumber}`;
+  const page = PAGES[record.kind];
+  // A path becomes a Route by our word: the list is data, and browser tests open these pages.
+  if (page) return `${page}/${record.id}` as Route;
+  return record.otherNumber === null ? null : (`/stock/lots/${record.otherNumber}` as Route);
 }
 
 /** What a movement was, with the way to its record. */

@@ -94,10 +94,10 @@ export function SecondReading({ reading, timeZone, onDecide }: Props) {
       ) : null}
       <div className="mt-3 grid grid-cols-2 gap-2.5">
         <Button variant="quiet" onClick={() => onDecide("discard")}>
-          Set the second aside
+          Set second aside
         </Button>
         <Button variant="quiet" onClick={() => onDecide("accept")}>
-          Let the second count
+          Count the second
         </Button>
       </div>
     </Ticket>

@@ -89,10 +89,10 @@ const SENTENCES: Record<ErrorCode, Sentence> = {
   "bag-in-other-session": ({ code, who }) =>
     `Bag ${code} is on the table of ${who}. Nothing was saved and nothing that you typed is lost; sort it there, or take it off that table first.`,
   "draft-overtaken": ({ who }) =>
-    `${who} has changed this session meanwhile. What you typed is still here and was not sent; look at the other's first.`,
+    `${who} has changed this session meanwhile. Nothing was saved over it and what you typed is kept here; look at the other's first.`,
   "draft-over": () =>
     "This session was saved or given up meanwhile. What you typed is still here; start a new one if it is needed.",
-  "no-bags": () => "There is no bag on the table. Scan one first.",
+  "no-bags": () => "There is no bag on the table. Nothing was saved; scan one first.",
   "piles-empty": () => "There is no pile and no reject yet. Nothing was saved; weigh at least one.",
   "sum-beyond-tolerance": (v) =>
     `The piles add up to ${text(v.sumKg)} kg of ${text(v.netKg)} kg; ${text(v.differenceKg)} kg is more than the scale can explain (${text(v.toleranceKg)} kg). Nothing was saved; weigh the piles again, or say where it went.`,

@@ -1,84 +1,34 @@
 /** One bag sorted on the built program, at 360 px: piles, a reject, what is missing, a reload, and undo. */
-import AxeBuilder from "@axe-core/playwright";
-import { expect, test, type Page } from "@playwright/test";
-import { newId } from "@/lib/core/ids";
+import { expect, test } from "@playwright/test";
 import { startE2eServer, type E2eServer } from "../support/e2e-server";
+import { addPile, expectAccessible, save, sortingShed } from "../support/sorting-page";
 
 let server: E2eServer;
-let codes: string[];
+let shed: ReturnType<typeof sortingShed>;
 
 test.beforeAll(async () => {
   server = await startE2eServer("shed");
-  codes = server
-    .query<{ code: string }>("select code from bags order by code")
-    .map(({ code }) => code);
+  shed = sortingShed(server);
 });
 test.afterAll(async () => {
   await server.close();
 });
 
-/** Weighs a bag in over HTTP, as the weigh-in page does. */
-async function weighedBag(page: Page, grams: number): Promise<string> {
-  const code = codes.pop();
-  const [scale] = server.query<{ id: string }>("select id from scales order by number limit 1");
-  if (!code || !scale) throw new Error("The scheme has no tag or no scale left for this test.");
-  const answer = await page.request.post(`${server.url}/api/weigh-ins`, {
-    headers: { origin: server.url },
-    data: {
-      requestId: newId(),
-      code,
-      scaleId: scale.id,
-      occurredAt: Date.now(),
-      readings: [
-        {
-          grossMilligrams: grams * 1000,
-          containerId: null,
-          containerTareMilligrams: 0,
-          sackId: null,
-          sackTareMilligrams: 0,
-        },
-      ],
-    },
-  });
-  expect(answer.status(), await answer.text()).toBe(200);
-  return code;
-}
-
-async function expectAccessible(page: Page): Promise<void> {
-  const { violations } = await new AxeBuilder({ page }).analyze();
-  expect(violations.map(({ id, nodes }) => `${id}: ${nodes[0]?.html}`)).toEqual([]);
-}
-
-async function addPile(page: Page, colour: string, kg: string): Promise<void> {
-  await page.getByRole("button", { name: "Add pile" }).click();
-  const dialog = page.getByRole("dialog");
-  await dialog.getByRole("radio", { name: "HDPE" }).check();
-  await dialog.getByRole("radio", { name: colour, exact: true }).check();
-  await dialog.getByLabel("Kind").selectOption("lids");
-  await dialog.getByLabel("The scale shows").fill(kg);
-  await dialog.getByRole("button", { name: /^Put/ }).click();
-  await expect(dialog).toBeHidden();
-}
-
-const save = (page: Page) => page.getByRole("button", { name: /^Save \d+ weights?, close bag$/ });
-const lotSums = () =>
-  server.query<{ grams: number }>(
-    "select b.grams from balances b join lots l on l.holder_id = b.holder_id order by l.number",
-  );
-
 test("splits a bag into piles and a reject, keeps them through a reload, and takes it back", async ({
   page,
 }) => {
   await server.signIn(page.context(), "volunteer");
-  const code = await weighedBag(page, 2160);
+  const code = await shed.weighedBag(page, 2160);
   await page.goto(`${server.url}/sorting`);
   await expect(page.getByText("1 bag waits")).toBeVisible();
   await expectAccessible(page);
   await page.getByLabel("Code on the tag").fill(code.toLowerCase());
   await page.keyboard.press("Enter");
   await expect(page.getByText("of 2.160 kg")).toBeVisible();
+  await expect(page).toHaveURL(/\/sorting\/table\//);
 
   await addPile(page, "Blue", "1.295");
+  await expect(page.getByText("whole, new lot")).toBeVisible();
   await addPile(page, "Light blue", "0.52");
   await addPile(page, "White", "0.23");
   await expect(page.getByText("0.115 kg still to weigh.")).toBeVisible();
@@ -100,23 +50,31 @@ test("splits a bag into piles and a reject, keeps them through a reload, and tak
   await save(page).click();
   await expect(page.getByText("Sorted by")).toBeVisible();
   await expect(page.getByText("Weighing difference, missing")).toBeVisible();
+  await expect(page).toHaveURL(/\/sorting\/sessions\//);
   await expectAccessible(page);
-  expect(lotSums()).toEqual([{ grams: 1295 }, { grams: 520 }, { grams: 230 }]);
+  expect(shed.lotSums()).toEqual([{ grams: 1295 }, { grams: 520 }, { grams: 230 }]);
   expect(
     server.query("select account, grams from lines where holder_id is null order by entry_id"),
   ).toEqual([
     { account: "source", grams: -2160 },
     { account: "difference", grams: 10 },
   ]);
+  // The tag of a sorted bag leads to how it was sorted.
+  await page.goto(`${server.url}/sorting/${code}`);
+  await expect(page.getByText("Sorted by")).toBeVisible();
 
   await page.getByRole("button", { name: "Undo this sorting" }).click();
-  await expect(page.getByText("Weigh the first pile.")).toBeVisible();
-  expect(lotSums()).toEqual([{ grams: 0 }, { grams: 0 }, { grams: 0 }]);
+  await expect(page.getByText("Its bags wait again.")).toBeVisible();
+  expect(shed.lotSums()).toEqual([{ grams: 0 }, { grams: 0 }, { grams: 0 }]);
+  await page.getByRole("button", { name: "Sort again, with these weights" }).click();
+  await expect(page.getByText("10 g left over, within what the scale can tell.")).toBeVisible();
 });
 
-test("asks once where more is missing than the scale can explain", async ({ page }) => {
+test("asks once where more is missing than the scale can explain, and weighs again", async ({
+  page,
+}) => {
   await server.signIn(page.context(), "volunteer");
-  const code = await weighedBag(page, 2000);
+  const code = await shed.weighedBag(page, 2000);
   await page.goto(`${server.url}/sorting/${code}`);
   await addPile(page, "Red", "1.8");
   await save(page).click();
@@ -140,12 +98,12 @@ test("keeps the piles when the server is gone, and saves them when it is back", 
   page,
 }) => {
   await server.signIn(page.context(), "volunteer");
-  const code = await weighedBag(page, 1000);
+  const code = await shed.weighedBag(page, 1000);
   await page.goto(`${server.url}/sorting/${code}`);
   await addPile(page, "Green", "1");
   await server.stop();
   await save(page).click();
-  await expect(page.getByText("The server did not answer", { exact: true })).toBeVisible();
+  await expect(page.getByText("Not saved: the server did not answer")).toBeVisible();
   await server.start();
   await save(page).click();
   await expect(page.getByText("Sorted by")).toBeVisible();
@@ -159,7 +117,7 @@ test("keeps the piles when the server is gone, and saves them when it is back", 
 
 test("says of a bag that is not weighed, or no bag at all, what it is", async ({ page }) => {
   await server.signIn(page.context(), "volunteer");
-  await page.goto(`${server.url}/sorting/${codes[0] ?? ""}`);
+  await page.goto(`${server.url}/sorting/${shed.unused()}`);
   await expect(page.getByText("This bag has not been weighed in yet.")).toBeVisible();
   await page.goto(`${server.url}/sorting`);
   await page.getByLabel("Code on the tag").fill("K7Q2-9F4N");

@@ -3,13 +3,14 @@ import "server-only";
 import type * as z from "zod";
 import { recordAudit } from "@/lib/audit/commands";
 import { AppError } from "@/lib/core/errors";
-import type { Id } from "@/lib/core/ids";
+import type { Id, LotId } from "@/lib/core/ids";
 import { judgeUndo } from "@/lib/core/undo";
 import { postAct, reverseAct } from "@/lib/ledger/commands/post";
 import { takenSince } from "@/lib/ledger/queries/entries";
 import { allow, requirePerson, type Context } from "@/lib/platform/context";
-import { prepared } from "@/lib/platform/database";
+import { prepared, type Tx } from "@/lib/platform/database";
 import { once } from "@/lib/platform/receipts";
+import { closeIfEmptyIn, reopenLotIn } from "@/lib/stock/commands/close-lot";
 import type { RemovalReceipt, TakeAwayInput, undoRemovalEndpoint } from "../contract/removals";
 import { getLiveReceipt, getStoredRemoval } from "../queries/stored";
 import { insertRemovalIn } from "./insert";
@@ -38,6 +39,7 @@ export function takeAway(ctx: Context, input: TakeAwayInput): RemovalReceipt {
       corrects: null,
       actId,
     });
+    for (const { lotId } of planned.lots) closeIfEmptyIn(tx, lotId, ctx.now);
     const { source, route, grams, differenceGrams, basis } = receipt;
     recordAudit(tx, ctx, {
       action: "removals.record",
@@ -92,6 +94,9 @@ export function undoRemoval(
         tx.client,
         "update removals set state = 'undone', undone_act_id = ? where id = ?",
       ).run(actId, removal.id);
+      for (const lotId of listRemovedLots(tx, removal.id)) {
+        reopenLotIn(tx, lotId, removal.recordedAt, "empty");
+      }
       recordAudit(tx, ctx, {
         action: "removals.undo",
         subjectKind: "removal",
@@ -102,4 +107,11 @@ export function undoRemoval(
       return { id: removal.id, state: "undone" };
     },
   );
+}
+
+/** The lots that a removal took from. */
+function listRemovedLots(tx: Tx, removalId: Id<"removal">): LotId[] {
+  return prepared(tx.client, "select lot_id from removal_lots where removal_id = ?")
+    .pluck()
+    .all(removalId) as LotId[];
 }

@@ -11,7 +11,8 @@ import { allow, requirePerson, type Context } from "@/lib/platform/context";
 import { prepared, type Tx } from "@/lib/platform/database";
 import { once } from "@/lib/platform/receipts";
 import type { CorrectSortingInput, CorrectSortingReceipt } from "../contract/sortings";
-import { getWeighedBag, listBagsOf, takenFromBags } from "../queries/table";
+import { getWeighedBag, listBagsOf } from "../queries/table";
+import { takenFromBags } from "../queries/taken";
 import { insertSession, judgeTableIn, sortDraft, type TippedBag } from "./session";
 import { releaseBagsIn, requireSorting } from "./undo";
 

@@ -13,7 +13,8 @@ import { inSnapshot, prepared, type Readable } from "@/lib/platform/database";
 import type { Load } from "../rules/table";
 import type { SortingState } from "../terms";
 import { listFractions, type StoredFraction } from "./fractions";
-import { getWeighedBag, listLoads, takenFromBags } from "./table";
+import { getWeighedBag, listLoads } from "./table";
+import { takenFromBags } from "./taken";
 
 export type SortingPageBag = {
   code: LabelCode;

@@ -4,7 +4,6 @@ import type { LabelCode } from "@/lib/core/bag-code";
 import type { BagId, ScaleId, SortingId, WeighInId } from "@/lib/core/ids";
 import type { PolymerAnswer } from "@/lib/core/plastics";
 import type { Instant } from "@/lib/core/time";
-import { listActEntries, loadLines } from "@/lib/ledger/queries/entries";
 import { prepared, type Readable } from "@/lib/platform/database";
 import { getScale } from "@/lib/scales/queries/scales";
 import type { Reading } from "@/lib/scales/rules/reading";
@@ -40,19 +39,6 @@ export function listBagsOf(db: Readable, sortingId: SortingId): { id: BagId; cod
     `select b.id, b.code from sorting_bags sb join bags b on b.id = sb.bag_id
       where sb.session_id = ? order by b.code`,
   ).all(sortingId) as { id: BagId; code: LabelCode }[];
-}
-
-/** What a session's act took from each bag, in grams, by the bag's holder in the ledger. */
-export function takenFromBags(db: Readable, actId: number): Map<number, number> {
-  const taken = new Map<number, number>();
-  for (const { id, kind } of listActEntries(db, actId)) {
-    if (kind !== "sort") continue;
-    for (const line of loadLines(db, id)) {
-      if (line.account !== "bag" || line.holderId === null) continue;
-      taken.set(line.holderId, (taken.get(line.holderId) ?? 0) - line.grams);
-    }
-  }
-  return taken;
 }
 
 /** The readings of a weigh-in as loads on its scale; they belong to the tolerance of its sorting. */

@@ -28,6 +28,17 @@ export function closeLotIn(tx: Tx, lotId: LotId, at: Instant, closedFor: LotEnd)
   );
 }
 
+/** Closes a lot of which nothing is left. A step of a larger command. */
+export function closeIfEmptyIn(tx: Tx, lotId: LotId, at: Instant): boolean {
+  const held = prepared(
+    tx.client,
+    `select coalesce(sum(b.grams), 0) from lots l join balances b on b.holder_id = l.holder_id where l.id = ?`,
+  )
+    .pluck()
+    .get(lotId) as number;
+  return held === 0 && closeLotIn(tx, lotId, at, "empty");
+}
+
 /**
  * Undo of a record that closed a lot: it takes piles again, unless the next lot of its material has opened since. A
  * step of a larger command.

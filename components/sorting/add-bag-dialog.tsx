@@ -28,7 +28,7 @@ export function AddBagDialog({ codes, onAdd, onClose }: Props) {
     async (code: LabelCode) => {
       const shown = formatCode(code);
       try {
-        const bag = await cache.fetchQuery({ ...bagQuery(code), staleTime: 0, retry: false });
+        const bag = await cache.query({ ...bagQuery(code), staleTime: 0, retry: false });
         // A replaced tag opens the same bag; it is known by its first code.
         cache.setQueryData(bagQuery(bag.code).queryKey, bag);
         if (codes.includes(bag.code)) {

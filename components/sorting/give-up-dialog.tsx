@@ -10,7 +10,7 @@ import { forgetTable } from "./kept-tables";
 /** version null: it is kept on this device only. */
 export type GivenUp = { id: string; version: number | null };
 
-type Props = { given: GivenUp; helperId: string | null; onClose: () => void };
+type Props = { given: GivenUp; helperId: string; onClose: () => void };
 
 /** Asks before what was weighed is thrown away. */
 export function GiveUpDialog({ given: { id, version }, helperId, onClose }: Props) {
@@ -32,7 +32,7 @@ export function GiveUpDialog({ given: { id, version }, helperId, onClose }: Prop
         return;
       }
     }
-    if (helperId !== null) forgetTable(helperId, id);
+    forgetTable(helperId, id);
     onClose();
   }
 

@@ -14,9 +14,11 @@ import { namesTogether } from "./session-notices";
 import { useDrafts } from "./use-table";
 
 type Props = {
-  /** Whose session this is; null while that is not known. */
-  helperId: string | null;
+  /** Whose session this is. */
+  helperId: string;
   timeZone: string;
+  /** The program's clock. */
+  now: number;
 };
 
 /** "K7Q2-9F4M" or "K7Q2-9F4M and 4 more". */
@@ -27,19 +29,19 @@ function bagWords(codes: readonly string[]): string {
 }
 
 /** Sessions that were put aside, on the server and on this device only. */
-export function PutAside({ helperId, timeZone }: Props) {
+export function PutAside({ helperId, timeZone, now }: Props) {
   const cache = useQueryClient();
   const { data: drafts } = useDrafts();
   const [givingUp, setGivingUp] = useState<GivenUp | null>(null);
   if (!drafts) return null;
-  const here = helperId === null ? [] : listKept(helperId);
+  const here = listKept(helperId);
   const onlyHere = here.filter(
     ({ id, table: { draft } }) =>
       !drafts.some((one) => one.id === id) && draft.piles.length + draft.rejects.length > 0,
   );
   if (drafts.length + onlyHere.length === 0) return null;
   const when = (at: number) => {
-    const [on, today] = [instant(at), dayOf(instant(Date.now()), timeZone)];
+    const [on, today] = [instant(at), dayOf(instant(now), timeZone)];
     const day = dayOf(on, timeZone);
     return day === today
       ? formatClock(on, timeZone)

@@ -16,6 +16,10 @@ export function readFilter(query: Pick<URLSearchParams, "get">): WaitingFilter {
   };
 }
 
+export function isNarrowed(filter: WaitingFilter): boolean {
+  return Object.values<unknown>(filter).some((value) => value !== undefined);
+}
+
 /** "/sorting?polymer=PP&after=…", or "/sorting" when nothing is left out. */
 export function waitingAddress(filter: WaitingFilter, after?: string): string {
   const query = new URLSearchParams();

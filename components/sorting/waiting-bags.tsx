@@ -21,7 +21,7 @@ import { useToday } from "../weighing/use-today";
 import { CodeEntry } from "./code-entry";
 import { PutAside } from "./put-aside";
 import { useWaitingBags } from "./use-table";
-import { readFilter, waitingAddress } from "./waiting-address";
+import { isNarrowed, readFilter, waitingAddress } from "./waiting-address";
 import { WaitingFilters } from "./waiting-filters";
 import { WaitingRow } from "./waiting-row";
 
@@ -36,7 +36,7 @@ export function WaitingBags() {
   const today = useToday(1);
   const [ticked, setTicked] = useState<ReadonlyMap<string, WaitingBag>>(new Map());
   const open = useCallback((code: LabelCode) => router.push(`/sorting/${code}`), [router]);
-  const filtered = Object.values(filter).some((value) => value !== undefined);
+  const filtered = isNarrowed(filter);
 
   // The list comes from a handler, so the page need not be asked for again.
   const narrow = (next: WaitingFilter) =>
@@ -77,7 +77,13 @@ export function WaitingBags() {
           The list may be old; the page goes on asking.
         </Notice>
       ) : null}
-      <PutAside helperId={today.data?.helperId ?? null} timeZone={today.data?.timeZone ?? "UTC"} />
+      {today.data ? (
+        <PutAside
+          helperId={today.data.helperId}
+          timeZone={today.data.timeZone}
+          now={today.data.now}
+        />
+      ) : null}
       <h2 className="mt-6 mb-1 text-lg">Waiting, oldest first</h2>
       <WaitingFilters filter={filter} points={points} onFilter={narrow} />
       {data ? (

@@ -8,6 +8,7 @@ import { POLYMER_ANSWERS, POLYMER_NAMES, type PolymerAnswer } from "@/lib/core/p
 import type { WaitingFilter } from "@/lib/sorting/contract/waiting";
 import { CONDITION_NAMES, CONDITIONS, type Condition } from "@/lib/weighing/terms";
 import type { DeskPoint } from "../weighing/use-desk-lists";
+import { isNarrowed } from "./waiting-address";
 
 type Props = {
   filter: WaitingFilter;
@@ -18,7 +19,7 @@ type Props = {
 /** Point, likely polymer and condition; what is left at "all" lets every bag through. */
 export function WaitingFilters({ filter, points, onFilter }: Props) {
   const [words, setWords] = useState(filter.point ?? "");
-  const used = Object.values(filter).some((value) => value !== undefined);
+  const used = isNarrowed(filter);
   return (
     <details className="group mb-3" open={used}>
       <summary className="link flex min-h-11 cursor-pointer items-center font-bold">

@@ -99,13 +99,6 @@ export function listLotCounts(ctx: Context, number: number): CountView[] {
   });
 }
 
-/** One count as a page shows it, or null. */
-export function getCount(ctx: Context, id: Id<"count">): CountView | null {
-  allow(ctx, "stock.read");
-  const row = prepared(ctx.db.reader.client, `${VIEW} where c.id = ?`).get(id);
-  return row === undefined ? null : viewOf(ctx, row as ViewRow);
-}
-
 const PAGE = 50;
 
 export const TO_REVIEW_SQL = `${VIEW}

@@ -1,0 +1,114 @@
+import { afterEach, beforeEach, describe, expect, it } from "vitest";
+import { newId } from "@/lib/core/ids";
+import { identifyLot } from "@/lib/stock/commands/move-lot";
+import type { IdentifyLotInput, MergeLotInput } from "@/lib/stock/contract/moves";
+import { getLotRecord } from "@/lib/stock/queries/lot-record";
+import { commandCases, refusalOf } from "../../support/command-cases";
+import { newScheme, NOON } from "../../support/scheme";
+import { stockRoom, type StockRoom } from "../../support/stock-room";
+import { all, count, rows } from "../../support/stock-work";
+
+let room: StockRoom;
+beforeEach(() => {
+  room = stockRoom(newScheme());
+});
+afterEach(() => room.close());
+
+const partsOf = (of: StockRoom, number: number) =>
+  rows(
+    of,
+    `select p.grams from parts p join lots l on l.holder_id = p.holder_id
+      where l.number = ? and p.dim = 'O' order by p.key`,
+    number,
+  ).map((part) => (part as { grams: number }).grams);
+
+/** Two lots of one material: the first is closed, so that the second opened. */
+function twoLots(of: StockRoom): [number, number] {
+  const first = of.fill(2000, {}, 0);
+  of.db.writer.client
+    .prepare("update lots set closed_at = ?, closed_for = 'full' where number = ?")
+    .run(NOON, first);
+  return [first, of.fill(1000, {}, 1)];
+}
+
+const merge = (
+  number: number,
+  toNumber: number,
+  more: Partial<MergeLotInput> = {},
+): MergeLotInput => ({
+  requestId: newId(NOON),
+  number,
+  toNumber,
+  amount: { how: "all" },
+  count: null,
+  occurredAt: NOON,
+  ...more,
+});
+const taken = (of: StockRoom, grams: number, all = false) => ({
+  how: "taken" as const,
+  all,
+  ...of.weighed(grams),
+});
+
+const identify = (number: number): IdentifyLotInput => ({
+  requestId: newId(NOON),
+  number,
+  polymer: "PP",
+  kind: "tubs",
+  colourCode: "white",
+  method: "float",
+  amount: { how: "all" },
+  count: null,
+  occurredAt: NOON,
+});
+
+describe("identifying", () => {
+  commandCases({
+    command: identifyLot,
+    by: "volunteer",
+    notBy: "donor",
+    input: (scheme) =>
+      identify(stockRoom(scheme).fill(400, { polymer: "not-sure", colour: "black", wash: "dry" })),
+    does: (scheme, answer) => {
+      expect(answer).toMatchObject({
+        kind: "identify",
+        grams: 400,
+        from: { heldGrams: 0, closed: true },
+        to: { number: 2, heldGrams: 400, opened: true },
+      });
+      expect(getLotRecord(scheme.db.reader, 2)).toMatchObject({
+        polymer: "PP",
+        kind: "tubs",
+        colourCode: "white",
+        form: "whole",
+        wash: "dry",
+      });
+      expect(rows(scheme, "select kind, method from lot_moves")).toEqual([
+        { kind: "identify", method: "float" },
+      ]);
+      expect(rows(scheme, "select kind from entries order by id desc limit 1")).toEqual([
+        { kind: "identify" },
+      ]);
+    },
+    wrongState: (scheme) => ({
+      input: identify(stockRoom(scheme).fill(400)),
+      code: "lot-identified-already",
+    }),
+    action: "stock.identify",
+  });
+
+  it("may name a part, and joins the open lot of what it is", () => {
+    const pp = room.fill(500, { polymer: "PP", kind: "tubs", colour: "white" });
+    const number = room.fill(400, { polymer: "not-sure" });
+    const input = { ...identify(number), amount: taken(room, 150) };
+    expect(identifyLot(room.ctx("volunteer"), input)).toMatchObject({
+      from: { heldGrams: 250, closed: false },
+      to: { number: pp, heldGrams: 650, opened: false },
+    });
+    expect(
+      refusalOf(() =>
+        identifyLot(room.ctx("volunteer"), { ...identify(number), colourCode: "gold" }),
+      ),
+    ).toBe("unknown-colour");
+  });
+});

@@ -9,7 +9,7 @@ export default defineConfig({
   workers: 1,
   retries: 0,
   forbidOnly: Boolean(process.env.CI),
-  timeout: 90_000,
+  timeout: 180_000,
   expect: { timeout: 10_000 },
   globalTimeout: 20 * 60_000,
   reporter: [

@@ -69,8 +69,8 @@ export function replacementOf(
 ): z.input<typeof correctedWeighInSchema> {
   const { polymer, kind, colourCode, oneKind, condition } = values;
   return {
-    scaleId: values.scaleId as ScaleId,
-    pointId: values.pointId as PointId,
+    scaleId: values.scaleId,
+    pointId: values.pointId,
     occurredAt,
     readings: readings.map((reading) => ({
       ...reading,

@@ -1,6 +1,6 @@
 /** A saved weigh-in in the form's fields, and the form's fields as a correction of it. */
 import type * as z from "zod";
-import { newId, type Id, type PointId, type ScaleId } from "@/lib/core/ids";
+import { newId, type Id } from "@/lib/core/ids";
 import type { Instant } from "@/lib/core/time";
 import type { correctedWeighInSchema, WeighInPage } from "@/lib/weighing/contract/corrections";
 import { TYPED, valuesOf, type FormValues } from "./form-values";

@@ -1,6 +1,6 @@
 /**
  * What is done to the pictures, and how much of it. Set from what a shed does to a label, before any decoder
- * had seen a picture, so that the table compares decoders and not settings. Once lowered since: hard blur, glare
+ * had seen a picture, so that the table compares decoders and not settings. Once lowered since: hard blur, and every level of glare
  * and wet wrinkles, of which no decoder at all had read a single picture, so that their rows told nothing.
  */
 export const SEVERITIES = {

@@ -8,7 +8,7 @@ import { listCountsToReview, listLotCounts, TO_REVIEW_SQL } from "@/lib/stock/qu
 import { commandCases, refusalOf } from "../../support/command-cases";
 import { newScheme, NOON } from "../../support/scheme";
 import { stockRoom, type StockRoom } from "../../support/stock-room";
-import { count, rows, step } from "../../support/stock-work";
+import { count, rows } from "../../support/stock-work";
 
 let room: StockRoom;
 beforeEach(() => {

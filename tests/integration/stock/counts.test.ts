@@ -11,7 +11,7 @@ import { getLotRecord } from "@/lib/stock/queries/lot-record";
 import { commandCases, refusalOf } from "../../support/command-cases";
 import { newScheme, NOON } from "../../support/scheme";
 import { stockRoom, type StockRoom } from "../../support/stock-room";
-import { count, lastLines, rows, step } from "../../support/stock-work";
+import { count, lastLines, rows } from "../../support/stock-work";
 
 let room: StockRoom;
 beforeEach(() => {

@@ -11,21 +11,13 @@ import { listLotMoves, LOT_MOVES_SQL } from "@/lib/stock/queries/moves";
 import { commandCases, refusalOf } from "../../support/command-cases";
 import { newScheme, NOON } from "../../support/scheme";
 import { stockRoom, type StockRoom } from "../../support/stock-room";
-import { all, count, rows, step } from "../../support/stock-work";
+import { rows } from "../../support/stock-work";
 
 let room: StockRoom;
 beforeEach(() => {
   room = stockRoom(newScheme());
 });
 afterEach(() => room.close());
-
-const partsOf = (of: StockRoom, number: number) =>
-  rows(
-    of,
-    `select p.grams from parts p join lots l on l.holder_id = p.holder_id
-      where l.number = ? and p.dim = 'O' order by p.key`,
-    number,
-  ).map((part) => (part as { grams: number }).grams);
 
 /** Two lots of one material: the first is closed, so that the second opened. */
 function twoLots(of: StockRoom): [number, number] {
@@ -48,11 +40,6 @@ const merge = (
   count: null,
   occurredAt: NOON,
   ...more,
-});
-const taken = (of: StockRoom, grams: number, all = false) => ({
-  how: "taken" as const,
-  all,
-  ...of.weighed(grams),
 });
 
 const identify = (number: number): IdentifyLotInput => ({

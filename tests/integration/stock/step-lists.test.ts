@@ -7,7 +7,7 @@ import { listOwnLosses, ownLoss, OWN_LOSS_SQL } from "@/lib/stock/queries/own-lo
 import { getStep, listSteps, STEPS_SQL } from "@/lib/stock/queries/steps";
 import { newScheme, NOON } from "../../support/scheme";
 import { stockRoom, type StockRoom } from "../../support/stock-room";
-import { all, count, out, rows, save, step } from "../../support/stock-work";
+import { all, out, rows, save, step } from "../../support/stock-work";
 
 let room: StockRoom;
 beforeEach(() => {

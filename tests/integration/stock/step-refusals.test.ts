@@ -7,7 +7,7 @@ import { getLotRecord } from "@/lib/stock/queries/lot-record";
 import { refusalOf } from "../../support/command-cases";
 import { newScheme, NOON } from "../../support/scheme";
 import { onFineScale, stockRoom, type StockRoom } from "../../support/stock-room";
-import { all, out, rows, save, step } from "../../support/stock-work";
+import { all, out, rows, save } from "../../support/stock-work";
 
 let room: StockRoom;
 beforeEach(() => {

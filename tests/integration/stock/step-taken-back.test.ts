@@ -10,7 +10,7 @@ import { getStep } from "@/lib/stock/queries/steps";
 import { commandCases, refusalOf } from "../../support/command-cases";
 import { newScheme, NOON } from "../../support/scheme";
 import { stockRoom, type StockRoom } from "../../support/stock-room";
-import { all, count, example, out, rows, save, step } from "../../support/stock-work";
+import { all, example, out, rows, save, step } from "../../support/stock-work";
 
 let room: StockRoom;
 beforeEach(() => {

@@ -4,7 +4,7 @@ import { getLotRecord } from "@/lib/stock/queries/lot-record";
 import { commandCases, refusalOf } from "../../support/command-cases";
 import { newScheme, type TestScheme } from "../../support/scheme";
 import { onFineScale, stockRoom, type StockRoom } from "../../support/stock-room";
-import { all, count, example, out, rows, save, step } from "../../support/stock-work";
+import { all, example, out, rows, save, step } from "../../support/stock-work";
 
 let room: StockRoom;
 beforeEach(() => {

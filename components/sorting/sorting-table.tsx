@@ -75,6 +75,7 @@ export function SortingTable({ id, session, helperId, timeZone, lists, reasons }
     setOffline(kept === "unreachable");
     if (kept !== "kept") {
       setAsking(false);
+      window.scrollTo({ top: 0 });
       return;
     }
     const input = { codes: [...codes], scaleId: scale.id, ...body, ...answer };
@@ -86,7 +87,11 @@ export function SortingTable({ id, session, helperId, timeZone, lists, reasons }
     setAsking(false);
     if (result.kind === "refused") session.hearRefusal(result.problem);
     setOffline(result.kind === "unreachable");
-    if (result.kind !== "done") return;
+    if (result.kind !== "done") {
+      // What is said of it stands above the piles; the button is at the foot.
+      window.scrollTo({ top: 0 });
+      return;
+    }
     session.forget();
     router.replace(`/sorting/sessions/${id}`);
   }
@@ -130,6 +135,16 @@ export function SortingTable({ id, session, helperId, timeZone, lists, reasons }
             onTakeAside={session.takeAside}
             onGoOn={goOn}
           />
+          {offline ? (
+            <Notice tone="warn" title="Not saved: the server did not answer" live="alert">
+              Saving needs the network. Everything is kept on this phone; try again when there is
+              signal.
+            </Notice>
+          ) : save.problem && !over && !state.refused ? (
+            <Notice tone="bad" title="Nothing was saved" live="alert">
+              {refusedField ?? save.problem.detail}
+            </Notice>
+          ) : null}
           {found.bags ? (
             <PilesBoard
               draft={draft}
@@ -138,7 +153,7 @@ export function SortingTable({ id, session, helperId, timeZone, lists, reasons }
               lists={lists}
               reasons={reasons}
               errors={save.fieldErrors}
-              onDraft={change}
+              onDraft={over ? null : change}
             />
           ) : (
             <Notice tone="warn" title="What the bags held is not known yet" live="status">
@@ -171,16 +186,6 @@ export function SortingTable({ id, session, helperId, timeZone, lists, reasons }
               </Button>
             </div>
           )}
-          {offline ? (
-            <Notice tone="warn" title="Not saved: the server did not answer" live="alert">
-              Saving needs the network. Everything is kept on this phone; try again when there is
-              signal.
-            </Notice>
-          ) : save.problem && !over && !state.refused ? (
-            <Notice tone="bad" title="Nothing was saved" live="alert">
-              {refusedField ?? save.problem.detail}
-            </Notice>
-          ) : null}
         </div>
       </div>
       {count > 0 && !over ? (

@@ -1,16 +1,18 @@
 "use client";
 
 import { useRouter } from "next/navigation";
-import { useEffect, useState } from "react";
+import { useEffect, useState, type ComponentProps } from "react";
 import type { ProblemDocument } from "@/lib/core/errors";
 import { ActionBar } from "@/components/ui/action-bar";
 import { Button } from "@/components/ui/button";
+import { ButtonLink } from "@/components/ui/button-link";
 import { Skeleton } from "@/components/ui/skeleton";
 import { useCommand } from "@/components/forms/use-command";
 import { formatKg } from "@/lib/core/mass";
 import type { LotSummary } from "@/lib/stock/contract/lots";
 import type { correctStepEndpoint, saveStepEndpoint } from "@/lib/stock/contract/steps";
 import { STEP_KIND_NAMES } from "@/lib/stock/terms";
+import { LaterUses } from "../stock/later-uses";
 import { ReasonField } from "../stock/reason-field";
 import { RefusalNotice } from "../stock/refusal-notice";
 import { useBinDesk } from "../stock/use-bin-desk";
@@ -41,6 +43,8 @@ type Props = {
   correcting?: { id: string; draft: StepDraft; occurredAt: number };
 };
 
+type Corrected = { later: ComponentProps<typeof LaterUses>["later"]; id: string };
+
 const STAGES: readonly Stage[] = ["in", "out", "rest"];
 const TITLES: Record<Stage, string> = {
   in: "1 of 3: what goes in",
@@ -65,6 +69,7 @@ export function StepWizard({ helperId, from, correcting }: Props) {
   const [stage, setStage] = useState<Stage>("in");
   const [asked, setAsked] = useState(false);
   const [reason, setReason] = useState("");
+  const [corrected, setCorrected] = useState<Corrected | null>(null);
   const [typed, setTyped] = useState<StepDraft | null>(correcting?.draft ?? null);
 
   // The draft is on this device only, so the first drawing of the page does not know it.
@@ -79,6 +84,14 @@ export function StepWizard({ helperId, from, correcting }: Props) {
     return () => clearTimeout(timer);
   }, [typed, helperId, from]);
 
+  if (corrected) {
+    return (
+      <div className="grid gap-4 rail:max-w-3xl">
+        <LaterUses later={corrected.later} title="Corrected" />
+        <ButtonLink href={`/steps/${corrected.id}`}>Open the step</ButtonLink>
+      </div>
+    );
+  }
   if (typed === null || !lists.ready) {
     return <Skeleton shape="tickets" count={2} label="Loading the step" />;
   }
@@ -128,7 +141,10 @@ export function StepWizard({ helperId, from, correcting }: Props) {
         replacement: { ...content, occurredAt },
       });
       if (result.kind === "done") {
-        router.push(`/steps/${result.receipt.replacementId ?? result.receipt.stepId}`);
+        const { later, replacementId, stepId } = result.receipt;
+        // What was taken since is named once, here: the corrected lots do not show it as such.
+        if (later.count > 0) setCorrected({ later, id: replacementId ?? stepId });
+        else router.push(`/steps/${replacementId ?? stepId}`);
       } else if (result.kind === "refused") setStage(stageOf(result.problem));
       return;
     }

@@ -207,7 +207,7 @@ test("yesterday's weigh-in is corrected after its lot was used", async ({ page }
   await expect(page.getByText("The display was read wrong")).toBeVisible();
   expect(
     server.query(
-      `select state, net_grams as grams from weigh_ins w join bags b on b.id = w.bag_id
+      `select w.state, w.net_grams as grams from weigh_ins w join bags b on b.id = w.bag_id
         where b.code = ? order by w.recorded_at, w.state`,
       code,
     ),

@@ -51,8 +51,8 @@ describe("the frame loop", () => {
     const telling = {
       ...video,
       readyState: 1,
-      requestVideoFrameCallback: (callback: () => void) => {
-        waits.push(callback);
+      requestVideoFrameCallback: (callback: VideoFrameRequestCallback) => {
+        waits.push(() => callback(0, {} as VideoFrameCallbackMetadata));
         return (asked += 1);
       },
       cancelVideoFrameCallback: () => undefined,

@@ -22,6 +22,7 @@ type Props = { later: LaterUses; timeZone: string };
 function recordAddress(subject: string) {
   const [kind = "", id = ""] = subject.split(":", 2);
   if (kind === "sorting") return `/sorting/sessions/${id}` as const;
+  if (kind === "step") return `/steps/${id}` as const;
   if (kind === "removal") return `/removals/${id}` as const;
   return kind === "weigh-in" ? (`/weigh-ins/${id}` as const) : null;
 }

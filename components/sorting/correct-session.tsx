@@ -34,7 +34,7 @@ export function CorrectSession({ session, timeZone }: Props) {
   const reasons = useRejectReasons();
   const save = useCommand(correctSortingEndpoint);
   const [draft, setDraft] = useState(() =>
-    draftFrom(session.fractions, session.scale?.id ?? "", { lots: true }),
+    draftFrom(session.fractions, session.scale?.id ?? "", { lots: "own" }),
   );
   const [nothing, setNothing] = useState(false);
   const [reason, setReason] = useState("");

@@ -17,6 +17,8 @@ export type PileDraft = {
   wash: WashState;
   /** The lot that somebody chose for it; null: it goes where such piles go by themselves. */
   lot: number | "new" | null;
+  /** Of a pile that is corrected: the lot it lies in, which may be named though it is closed. */
+  ownLot?: number;
   reading: ReadingValue;
 };
 export type RejectDraft = { id: string; reason: string; reading: ReadingValue };
@@ -70,7 +72,15 @@ export function bodyOf(
 ): Body | null {
   const piles: Body["piles"] = [];
   const rejects: Body["rejects"] = [];
-  for (const { id: _id, polymer, kind, colourCode, reading, ...rest } of draft.piles) {
+  for (const {
+    id: _id,
+    ownLot: _own,
+    polymer,
+    kind,
+    colourCode,
+    reading,
+    ...rest
+  } of draft.piles) {
     const read = readReading(reading, tares);
     if (!read.ok || polymer === "" || kind === "" || colourCode === "") return null;
     // The ids come from the lists of this program; the server checks each.

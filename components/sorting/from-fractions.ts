@@ -15,11 +15,14 @@ function readingOf({ grossMilligrams, tareMilligrams }: StoredFraction): Reading
   };
 }
 
-/** @param lots whether each pile keeps its lot while that is open; else it goes where such piles go by themselves */
+/**
+ * @param lots `none`: each pile goes where such piles go by themselves; `open`: it keeps its lot while that is open;
+ *   `own`: it keeps its lot in any case, because that is where it lies (a correction)
+ */
 export function draftFrom(
   fractions: readonly StoredFraction[],
   scaleId: string,
-  { lots }: { lots: boolean },
+  { lots }: { lots: "none" | "open" | "own" },
 ): Draft {
   return {
     scaleId,
@@ -36,7 +39,8 @@ export function draftFrom(
           kind,
           form,
           wash,
-          lot: lots && !lotClosed ? lotNumber : null,
+          lot: lots === "own" || (lots === "open" && !lotClosed) ? lotNumber : null,
+          ...(lots === "own" ? { ownLot: lotNumber } : {}),
           reading: readingOf(fraction),
         },
       ];

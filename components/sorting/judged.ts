@@ -1,11 +1,6 @@
 import { netGramsOf } from "@/lib/scales/rules/reading";
-import {
-  judgeSum,
-  loadsOf,
-  toleranceOf,
-  type Load,
-  type SumVerdict,
-} from "@/lib/sorting/rules/table";
+import { loadsOf, toleranceOf, type Load } from "@/lib/scales/rules/loads";
+import { judgeSum, type SumVerdict } from "@/lib/sorting/rules/table";
 import type { ListedTare } from "../weighing/read-form";
 import type { DeskScale } from "../weighing/use-desk-lists";
 import { readingsOf, type Draft } from "./draft";

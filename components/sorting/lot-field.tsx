@@ -19,7 +19,7 @@ export function LotField({ pile, onLot }: Props) {
   const [first, ...others] = lots ?? [];
   const gone =
     lots !== undefined && typeof pile.lot === "number"
-      ? !lots.some(({ number }) => number === pile.lot)
+      ? pile.lot !== pile.ownLot && !lots.some(({ number }) => number === pile.lot)
       : false;
   const byItself =
     lots === undefined
@@ -47,8 +47,7 @@ export function LotField({ pile, onLot }: Props) {
           {lotName(lot)}
         </option>
       ))}
-      {typeof pile.lot === "number" &&
-      (gone || lots === undefined || pile.lot === first?.number) ? (
+      {typeof pile.lot === "number" && !others.some(({ number }) => number === pile.lot) ? (
         <option value={pile.lot}>Lot {pile.lot}</option>
       ) : null}
       {first || pile.lot === "new" ? <option value="new">A new lot</option> : null}

@@ -16,7 +16,7 @@ export function SortAgain({ session, helperId }: Props) {
   function start() {
     const id = newId();
     const codes = session.bags.map(({ code }) => code);
-    const draft = draftFrom(session.fractions, session.scale?.id ?? "", { lots: true });
+    const draft = draftFrom(session.fractions, session.scale?.id ?? "", { lots: "open" });
     keepTable(helperId, { id, table: { codes, draft }, base: NOTHING_KEPT });
     router.push(`/sorting/table/${id}?bags=${codes.join(".")}`);
   }

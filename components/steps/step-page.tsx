@@ -139,7 +139,7 @@ export function StepPage({ step, timeZone, mayCorrect }: Props) {
             <ButtonLink variant="quiet" href={`/steps/${step.stepId}/correct`}>
               Correct
             </ButtonLink>
-            <TakeBackStep id={step.stepId} />
+            <TakeBackStep id={step.stepId} timeZone={timeZone} />
           </>
         ) : null}
       </div>

@@ -1,7 +1,7 @@
 "use client";
 
 import { useRouter } from "next/navigation";
-import { useEffect, useState, type ComponentProps } from "react";
+import { useEffect, useState } from "react";
 import type { ProblemDocument } from "@/lib/core/errors";
 import { ActionBar } from "@/components/ui/action-bar";
 import { Button } from "@/components/ui/button";
@@ -12,7 +12,8 @@ import { formatKg } from "@/lib/core/mass";
 import type { LotSummary } from "@/lib/stock/contract/lots";
 import type { correctStepEndpoint, saveStepEndpoint } from "@/lib/stock/contract/steps";
 import { STEP_KIND_NAMES } from "@/lib/stock/terms";
-import { LaterUses } from "../stock/later-uses";
+import { LaterUses } from "../ledger/later-uses";
+import type { LaterUses as Later } from "@/lib/core/schemas";
 import { ReasonField } from "../stock/reason-field";
 import { RefusalNotice } from "../stock/refusal-notice";
 import { useBinDesk } from "../stock/use-bin-desk";
@@ -41,9 +42,10 @@ type Props = {
   from: LotSummary | null;
   /** The step that is corrected, with what it said and when. */
   correcting?: { id: string; draft: StepDraft; occurredAt: number };
+  timeZone: string;
 };
 
-type Corrected = { later: ComponentProps<typeof LaterUses>["later"]; id: string };
+type Corrected = { later: Later; id: string };
 
 const STAGES: readonly Stage[] = ["in", "out", "rest"];
 const TITLES: Record<Stage, string> = {
@@ -60,7 +62,7 @@ function stageOf(problem: ProblemDocument): Stage {
 }
 
 /** Washing, drying, shredding, on a phone with gloves: three stages, kept on this device until saved. */
-export function StepWizard({ helperId, from, correcting }: Props) {
+export function StepWizard({ helperId, from, correcting, timeZone }: Props) {
   const router = useRouter();
   const { lists, scaleId } = useBinDesk();
   const save = useCommand<typeof saveStepEndpoint>(SAVE);
@@ -87,7 +89,7 @@ export function StepWizard({ helperId, from, correcting }: Props) {
   if (corrected) {
     return (
       <div className="grid gap-4 rail:max-w-3xl">
-        <LaterUses later={corrected.later} title="Corrected" />
+        <LaterUses later={corrected.later} title="Corrected" timeZone={timeZone} />
         <ButtonLink href={`/steps/${corrected.id}`}>Open the step</ButtonLink>
       </div>
     );

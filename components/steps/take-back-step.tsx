@@ -7,20 +7,21 @@ import { Button } from "@/components/ui/button";
 import { Dialog } from "@/components/ui/dialog";
 import type { Id } from "@/lib/core/ids";
 import type { correctStepEndpoint } from "@/lib/stock/contract/steps";
-import { LaterUses } from "../stock/later-uses";
+import { LaterUses } from "../ledger/later-uses";
+import type { LaterUses as Later } from "@/lib/core/schemas";
 import { ReasonField } from "../stock/reason-field";
 import { RefusalNotice } from "../stock/refusal-notice";
 
 const CORRECT = { method: "POST", path: "/api/steps/{id}/correct" } as const;
 
 /** Taking a step back that never was: nothing stands in its place. */
-export function TakeBackStep({ id }: { id: Id<"step"> }) {
+export function TakeBackStep({ id, timeZone }: { id: Id<"step">; timeZone: string }) {
   const router = useRouter();
   const correct = useCommand<typeof correctStepEndpoint>(CORRECT);
   const [open, setOpen] = useState(false);
   const [reason, setReason] = useState("");
   const [asked, setAsked] = useState(false);
-  const [later, setLater] = useState<Parameters<typeof LaterUses>[0]["later"] | null>(null);
+  const [later, setLater] = useState<Later | null>(null);
 
   async function send() {
     setAsked(true);
@@ -60,7 +61,7 @@ export function TakeBackStep({ id }: { id: Id<"step"> }) {
       >
         <div className="grid gap-4">
           {later ? (
-            <LaterUses later={later} title="Taken back" />
+            <LaterUses later={later} title="Taken back" timeZone={timeZone} />
           ) : (
             <>
               <p>

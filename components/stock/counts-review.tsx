@@ -14,7 +14,8 @@ import type { acceptCountEndpoint, CountView } from "@/lib/stock/contract/counts
 import { COUNT_KIND_NAMES } from "@/lib/stock/terms";
 import { ACCEPT_COUNT } from "./addresses";
 import { CorrectCountDialog } from "./correct-count-dialog";
-import { LaterUses } from "./later-uses";
+import { LaterUses } from "../ledger/later-uses";
+import type { LaterUses as Later } from "@/lib/core/schemas";
 import { RefusalNotice } from "./refusal-notice";
 
 type Props = { counts: readonly CountView[]; timeZone: string };
@@ -81,12 +82,12 @@ function CountToReview({
 export function CountsReview({ counts, timeZone }: Props) {
   const router = useRouter();
   const [correcting, setCorrecting] = useState<CountView | null>(null);
-  const [later, setLater] = useState<Parameters<typeof LaterUses>[0]["later"] | null>(null);
+  const [later, setLater] = useState<Later | null>(null);
   return (
     <QueryProvider>
       {later ? (
         <div className="mb-4">
-          <LaterUses later={later} title="Corrected" />
+          <LaterUses later={later} title="Corrected" timeZone={timeZone} />
         </div>
       ) : null}
       {counts.length === 0 ? (

@@ -13,7 +13,8 @@ import type { MoveView } from "@/lib/stock/contract/moves";
 import { COUNT_KIND_NAMES, IDENTIFY_METHOD_NAMES, MOVE_KIND_NAMES } from "@/lib/stock/terms";
 import { CorrectCountDialog } from "./correct-count-dialog";
 import { CorrectMoveDialog } from "./correct-move-dialog";
-import { LaterUses } from "./later-uses";
+import { LaterUses } from "../ledger/later-uses";
+import type { LaterUses as Later } from "@/lib/core/schemas";
 import { UndoRecord } from "./undo-record";
 
 type Props = {
@@ -44,9 +45,9 @@ export function LotRecords({ counts, moves, number, timeZone, mayCorrect }: Prop
   );
   const [said, setSaid] = useState<ReactNode>(null);
   const close = () => setCorrecting(null);
-  const saved = (later: Parameters<typeof LaterUses>[0]["later"]) => {
+  const saved = (later: Later) => {
     close();
-    setSaid(<LaterUses later={later} title="Corrected" />);
+    setSaid(<LaterUses later={later} title="Corrected" timeZone={timeZone} />);
     router.refresh();
   };
   if (counts.length === 0 && moves.length === 0) return null;

@@ -2,7 +2,7 @@ import "server-only";
 import { insertCorrectionIn, recordAudit } from "@/lib/audit/commands";
 import { getBagById } from "@/lib/bags/queries";
 import { AppError } from "@/lib/core/errors";
-import type { SortingId } from "@/lib/core/ids";
+import type { LotId, SortingId } from "@/lib/core/ids";
 import { correctAct, type Draft } from "@/lib/ledger/commands/post";
 import { heldBy } from "@/lib/ledger/queries/entries";
 import { listLaterUses } from "@/lib/ledger/queries/uses";
@@ -38,7 +38,14 @@ export function correctSorting(ctx: Context, input: CorrectSortingInput): Correc
       const sortingId = input.requestId as SortingId;
       const table =
         input.replacement &&
-        judgeTableIn(tx, ctx, bagsAgain(tx, wrong), input.replacement, ["replacement"]);
+        judgeTableIn(
+          tx,
+          ctx,
+          bagsAgain(tx, wrong),
+          input.replacement,
+          ["replacement"],
+          lotsOf(tx, wrong.id),
+        );
       const drafts: Draft[] = table ? [sortDraft(tx, sortingId, table)] : [];
       const { actId } = correctAct(
         tx,
@@ -95,4 +102,13 @@ function bagsAgain(tx: Tx, wrong: { id: SortingId; actId: number }): TippedBag[]
     const grams = (taken.get(weighed.holderId) ?? 0) + heldBy(tx, weighed.holderId, UNSORTED);
     return { bag, weighed, grams };
   });
+}
+
+/** The lots that a session filled. */
+function lotsOf(tx: Tx, sortingId: SortingId): ReadonlySet<LotId> {
+  return new Set(
+    prepared(tx.client, "select lot_id from fractions where session_id = ? and lot_id is not null")
+      .pluck()
+      .all(sortingId) as LotId[],
+  );
 }

@@ -8,9 +8,9 @@ import { ensureMaterial } from "@/lib/ledger/commands/define";
 import { prepared, type Tx } from "@/lib/platform/database";
 import { withListedTares } from "@/lib/scales/queries/instruments";
 import type { Scale } from "@/lib/scales/queries/scales";
+import { loadsOf, type Load } from "@/lib/scales/rules/loads";
 import { mpeOf, netGramsOf, refuseReadings, tareMilligrams } from "@/lib/scales/rules/reading";
 import type { TableInput } from "../contract/sortings";
-import { loadsOf, type Load } from "../rules/table";
 
 export type Fraction = {
   /** {@link REJECT} for a reject. */

@@ -2,7 +2,7 @@
 import "server-only";
 import type { Bag } from "@/lib/bags/queries";
 import { AppError } from "@/lib/core/errors";
-import type { PersonId, SortingId } from "@/lib/core/ids";
+import type { LotId, PersonId, SortingId } from "@/lib/core/ids";
 import { formatKg } from "@/lib/core/mass";
 import type { Instant } from "@/lib/core/time";
 import { undoUntil } from "@/lib/core/undo";
@@ -14,10 +14,11 @@ import type { Context } from "@/lib/platform/context";
 import { prepared, type Tx } from "@/lib/platform/database";
 import { basisOf, requireScale } from "@/lib/scales/queries/instruments";
 import type { Scale } from "@/lib/scales/queries/scales";
+import { toleranceOf } from "@/lib/scales/rules/loads";
 import { chosenLotIn, lotForMaterialIn, openLotIn, type OpenLot } from "@/lib/stock/commands/lots";
 import type { SortingReceipt, TableInput } from "../contract/sortings";
 import { listLoads, type WeighedBag } from "../queries/table";
-import { judgeSum, sortedAt, toleranceOf, type SumVerdict } from "../rules/table";
+import { judgeSum, sortedAt, type SumVerdict } from "../rules/table";
 import { REJECT_BIN_CODE } from "../terms";
 import { readFractions, type Fraction } from "./fractions";
 
@@ -46,6 +47,7 @@ export type JudgedTable = {
  * Reads and judges what lies on the table.
  *
  * @param path of the table in the input
+ * @param keeps lots of the session that is corrected: its piles lie there, also when they closed since
  * @throws AppError `unknown-scale`, `piles-empty`, `sum-beyond-tolerance` (name a cause or weigh again),
  *   `sum-far-above-net` (weigh again, then confirm), `lot-closed`, `lot-other-material`, and what
  *   {@link readFractions} refuses
@@ -56,6 +58,7 @@ export function judgeTableIn(
   bags: readonly TippedBag[],
   input: TableInput,
   path: readonly (string | number)[] = [],
+  keeps: ReadonlySet<LotId> = new Set(),
 ): JudgedTable {
   const scale = requireScale(tx, input.scaleId, input.occurredAt, [...path, "scaleId"]);
   const fractions = readFractions(tx, input, scale, path);
@@ -74,7 +77,7 @@ export function judgeTableIn(
   // None of the bags can be sorted before it came.
   const lastWeighed = Math.max(...bags.map(({ weighed }) => weighed.occurredAt)) as Instant;
   const occurredAt = sortedAt(input.occurredAt, lastWeighed, ctx.now);
-  const { targets, targetOf } = findTargets(tx, ctx, input, fractions, path);
+  const { targets, targetOf } = findTargets(tx, ctx, input, fractions, path, keeps);
   return {
     bags,
     scale,
@@ -116,6 +119,7 @@ function findTargets(
   input: TableInput,
   fractions: readonly Fraction[],
   path: readonly (string | number)[],
+  keeps: ReadonlySet<LotId>,
 ): Pick<JudgedTable, "targets" | "targetOf"> {
   const targets = new Map<string, Target>();
   const targetOf = fractions.map(({ materialId, netGrams, mpeMilligrams }, at): Target | null => {
@@ -126,10 +130,10 @@ function findTargets(
     if (!target) {
       const lot =
         wanted === null
-          ? lotForMaterialIn(tx, ctx, materialId)
+          ? lotForMaterialIn(tx, ctx, materialId, keeps)
           : wanted === "new"
             ? openLotIn(tx, ctx, materialId)
-            : chosenLotIn(tx, wanted, materialId, [...path, "piles", at, "lot"]);
+            : chosenLotIn(tx, wanted, materialId, [...path, "piles", at, "lot"], keeps);
       // The one that is open by itself may also be the one that was chosen.
       const same = [...targets.values()].find(({ holderId }) => holderId === lot.holderId);
       target = same ?? { ...lot, materialId, grams: 0, mpeMilligrams: 0 };

@@ -10,7 +10,7 @@ import { listLaterUses } from "@/lib/ledger/queries/uses";
 import { UNSORTED, type LossCause } from "@/lib/ledger/terms";
 import { actorId, allow, type Context } from "@/lib/platform/context";
 import { inSnapshot, prepared, type Readable } from "@/lib/platform/database";
-import type { Load } from "../rules/table";
+import type { Load } from "@/lib/scales/rules/loads";
 import type { SortingState } from "../terms";
 import { listFractions, type StoredFraction } from "./fractions";
 import { getWeighedBag, listLoads } from "./table";

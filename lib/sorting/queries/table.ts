@@ -6,9 +6,9 @@ import type { PolymerAnswer } from "@/lib/core/plastics";
 import type { Instant } from "@/lib/core/time";
 import { prepared, type Readable } from "@/lib/platform/database";
 import { getScale } from "@/lib/scales/queries/scales";
+import { loadsOf, type Load } from "@/lib/scales/rules/loads";
 import type { Reading } from "@/lib/scales/rules/reading";
 import type { Condition } from "@/lib/weighing/terms";
-import { loadsOf, type Load } from "../rules/table";
 
 export type WeighedBag = {
   weighInId: WeighInId;

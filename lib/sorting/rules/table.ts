@@ -5,35 +5,6 @@
  */
 import type { Instant } from "@/lib/core/time";
 import type { LossCause } from "@/lib/ledger/terms";
-import type { Reading } from "@/lib/scales/rules/reading";
-import { combinedTolerance, mpeInService, type ScaleSpec } from "@/lib/scales/rules/scale";
-
-/** A load and the scale on which it was read. */
-export type Load = { loadMilligrams: number; scale: ScaleSpec };
-
-/**
- * The readings of a scale behind one weighing: its gross, and each tare from the list, which was read once on
- * a scale too (this scale's error stands for it). A typed tare is taken as told.
- */
-export function loadsOf(reading: Reading, scale: ScaleSpec): Load[] {
-  const { grossMilligrams, containerId, containerTareMilligrams, sackId, sackTareMilligrams } =
-    reading;
-  const loads = [grossMilligrams];
-  if (containerId !== null) loads.push(containerTareMilligrams);
-  if (sackId !== null) loads.push(sackTareMilligrams);
-  return loads.map((loadMilligrams) => ({ loadMilligrams, scale }));
-}
-
-/**
- * How far piles and net may lie apart: 2 u over all readings (the bag's, the piles', the rejects', their
- * tares), not less than the largest display step (product.md, Sorting). Whole milligrams.
- */
-export function toleranceOf(loads: readonly Load[]): number {
-  return combinedTolerance(
-    loads.map((load) => mpeInService(load.scale, load.loadMilligrams)),
-    loads.reduce((largest, load) => Math.max(largest, load.scale.dMilligrams), 0),
-  );
-}
 
 export type SumVerdict =
   /** The scale can explain it: posted as weighing difference (which may be zero). */

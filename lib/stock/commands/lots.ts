@@ -25,8 +25,22 @@ const SITE = 1;
  * a label of its own and a holder in the ledger. A step of a larger command, which writes the audit row.
  *
  * @param materialId from the ledger's ensureMaterial; never 1 (unsorted) or 2 (reject)
+ * @param keeps lots that a corrected record had filled: what is of the same material stays where it lies, also when
+ *   that lot closed since
  */
-export function lotForMaterialIn(tx: Tx, ctx: Context, materialId: number): OpenLot {
+export function lotForMaterialIn(
+  tx: Tx,
+  ctx: Context,
+  materialId: number,
+  keeps: ReadonlySet<LotId> = new Set(),
+): OpenLot {
+  for (const kept of keeps) {
+    const found = prepared(
+      tx.client,
+      "select id as lotId, holder_id as holderId, number from lots where id = ? and material_id = ?",
+    ).get(kept, materialId) as Omit<OpenLot, "opened"> | undefined;
+    if (found) return { ...found, opened: false };
+  }
   closeOldLotsOfIn(tx, ctx.now, materialId);
   const open = prepared(
     tx.client,
@@ -60,6 +74,7 @@ export function openLotIn(tx: Tx, ctx: Context, materialId: number, place = ""):
  * The lot that somebody chose for a material.
  *
  * @param path of the choice in the input
+ * @param keeps lots that may be named though they are closed: those that a corrected record had filled
  * @throws AppError `lot-closed`, `lot-other-material`
  */
 export function chosenLotIn(
@@ -67,6 +82,7 @@ export function chosenLotIn(
   number: number,
   materialId: number,
   path: readonly (string | number)[],
+  keeps: ReadonlySet<LotId> = new Set(),
 ): OpenLot {
   const found = prepared(
     tx.client,
@@ -74,7 +90,9 @@ export function chosenLotIn(
       from lots where number = ?`,
   ).get(number) as
     (Omit<OpenLot, "opened"> & { materialId: number; closedAt: number | null }) | undefined;
-  if (!found || found.closedAt !== null) throw new AppError("lot-closed", { lot: number }, path);
+  if (!found || (found.closedAt !== null && !keeps.has(found.lotId))) {
+    throw new AppError("lot-closed", { lot: number }, path);
+  }
   if (found.materialId !== materialId) {
     throw new AppError("lot-other-material", { lot: number }, path);
   }

@@ -174,6 +174,7 @@ function replaceIn(
           ctx,
           { ...standing, weighInId: standing.id, code: bag.code, scaleNumber: scale.number },
           standing.oneKind ? materialOf(standing) : null,
+          wrong.lotId,
         )
       : { drafts: [], lot: null };
   const { actId } = correctAct(

@@ -1,7 +1,7 @@
 /** What a weigh-in posts, first saved or corrected: into the bag, and for a bag of one kind on into its lot. */
 import "server-only";
 import type { LabelCode } from "@/lib/core/bag-code";
-import type { PointId } from "@/lib/core/ids";
+import type { LotId, PointId } from "@/lib/core/ids";
 import type { Instant } from "@/lib/core/time";
 import { ensureHolder, ensureMaterial, ensureOrigin } from "@/lib/ledger/commands/define";
 import type { Draft } from "@/lib/ledger/commands/post";
@@ -28,12 +28,16 @@ export type WeighedDrafts = {
   lot: (OpenLot & { materialId: number }) | null;
 };
 
-/** @param material of a bag of one kind; null for a bag that waits for sorting */
+/**
+ * @param material of a bag of one kind; null for a bag that waits for sorting
+ * @param keeps the lot of the weigh-in that is corrected: the bag lies there, also when it closed since
+ */
 export function weighInDrafts(
   tx: Tx,
   ctx: Context,
   weighed: Weighed,
   material: ReturnType<typeof materialOf>,
+  keeps: LotId | null = null,
 ): WeighedDrafts {
   const { code, pointId, occurredAt, netGrams, mpeMilligrams, basis, scaleNumber } = weighed;
   const subject = `weigh-in:${weighed.weighInId}`;
@@ -58,7 +62,10 @@ export function weighInDrafts(
   ];
   if (!material) return { drafts, lot: null };
   const materialId = ensureMaterial(tx, { ...material, form: "whole", wash: "as-received" });
-  const lot = { ...lotForMaterialIn(tx, ctx, materialId), materialId };
+  const lot = {
+    ...lotForMaterialIn(tx, ctx, materialId, new Set(keeps === null ? [] : [keeps])),
+    materialId,
+  };
   drafts.push({
     kind: "sort",
     occurredAt,

@@ -2,7 +2,7 @@
 import "server-only";
 import type * as z from "zod";
 import type { LabelCode } from "@/lib/core/bag-code";
-import type { BagId, PersonId, PointId, ScaleId, WeighInId } from "@/lib/core/ids";
+import type { BagId, LotId, PersonId, PointId, ScaleId, WeighInId } from "@/lib/core/ids";
 import type { Kind, PolymerAnswer } from "@/lib/core/plastics";
 import type { ReadingInput } from "@/lib/core/schemas";
 import type { Instant } from "@/lib/core/time";
@@ -33,6 +33,8 @@ export type StoredWeighIn = {
   kind: Kind | null;
   colourCode: string | null;
   oneKind: boolean;
+  /** Of a bag of one kind. */
+  lotId: LotId | null;
   actId: number | null;
   undoneActId: number | null;
   corrects: WeighInId | null;
@@ -50,7 +52,7 @@ export function getStoredWeighIn(db: Readable, id: WeighInId): StoredWeighIn | n
     `select w.id, w.bag_id as bagId, b.code, w.point_id as pointId, w.scale_id as scaleId, w.done_by as doneBy,
        w.occurred_at as occurredAt, w.recorded_at as recordedAt, w.state, w.net_grams as netGrams,
        w.mpe_mg as mpeMilligrams, w.basis, w.below_minimum as belowMinimum, w.condition, w.polymer, w.kind,
-       w.colour_code as colourCode, w.one_kind as oneKind, w.act_id as actId, w.undone_act_id as undoneActId, w.corrects
+       w.colour_code as colourCode, w.one_kind as oneKind, w.lot_id as lotId, w.act_id as actId, w.undone_act_id as undoneActId, w.corrects
       from weigh_ins w join bags b on b.id = w.bag_id where w.id = ?`,
   ).get(id) as Row | undefined;
   if (!row) return null;

@@ -240,6 +240,23 @@ describe("correcting a session", () => {
     );
   });
 
+  it("keeps its own lot though that closed since, and no other closed one", () => {
+    const bag = shed.weigh(1000);
+    const { sortingId } = close(sorting(shed, bag, { piles: [{ grams: 1000 }] }));
+    close(sorting(shed, shed.weigh(500), { piles: [{ grams: 500, lot: "new" }] }));
+    shed.db.writer.client.prepare("update lots set closed_at = ?, closed_for = 'full'").run(NOON);
+    const foreign = tableOf(bag, { piles: [{ grams: 1000, lot: 2 }] });
+    expect(refusal(() => correct(sortingId, foreign))).toMatchObject({
+      code: "lot-closed",
+      path: ["replacement", "piles", 0, "lot"],
+    });
+    const own = tableOf(bag, { piles: [{ grams: 900, lot: 1 }], rejects: [{ grams: 100 }] });
+    expect(correct(sortingId, own).receipt?.lots).toMatchObject([
+      { number: 1, opened: false, heldGrams: 900 },
+    ]);
+    expect(rows("select count(*) as n from lots")).toEqual([{ n: 2 }]);
+  });
+
   it("without a replacement lets the bags wait again", () => {
     const bags = [shed.weigh(2160), shed.weigh(1000)];
     const { sortingId } = close(sorting(shed, bags, { piles: [{ grams: 3160 }] }));

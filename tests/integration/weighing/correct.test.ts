@@ -165,6 +165,28 @@ describe("correctWeighIn", () => {
     ]);
   });
 
+  it("leaves a bag of one kind in its lot, though that closed since", () => {
+    const [code = ""] = desk.tags(1);
+    const { weighInId } = posted(desk.weigh(code, {}, ONE_KIND));
+    desk.db.writer.client.prepare("update lots set closed_at = ?, closed_for = 'full'").run(NOON);
+    correct(weighInId, replacementOf(weighInId, { grossMilligrams: 3_720_000 }));
+    expect(
+      rows("select l.number, b.grams from lots l join balances b on b.holder_id = l.holder_id"),
+    ).toEqual([{ number: 1, grams: 2100 }]);
+    // What is of another material lies elsewhere.
+    const latest =
+      rows<{ id: string }>("select id from weigh_ins where state = 'posted'")[0]?.id ?? "";
+    correct(latest, replacementOf(latest, { colourCode: "white" }));
+    expect(
+      rows(
+        "select l.number, b.grams from lots l join balances b on b.holder_id = l.holder_id order by 1",
+      ),
+    ).toEqual([
+      { number: 1, grams: 0 },
+      { number: 2, grams: 2100 },
+    ]);
+  });
+
   it("moves a bag of the wrong point to the right one", () => {
     const [code = ""] = desk.tags(1);
     const { weighInId } = posted(desk.weigh(code));

@@ -60,7 +60,7 @@ describe("a saved session back in the form", () => {
     const draft = draftFrom(
       [fraction(), fraction({ pile: null, rejectReason: "food", rejectName: "Food or dirt" })],
       "scale",
-      { lots: true },
+      { lots: "open" },
     );
     expect(draft).toMatchObject({
       scaleId: "scale",
@@ -77,7 +77,12 @@ describe("a saved session back in the form", () => {
     });
     expect(judgeDraft(draft, [bag(2292)], undefined, []).verdict.kind).toBe("within");
     const closed = fraction({ pile: { ...fraction().pile!, lotClosed: true } });
-    expect(draftFrom([closed], "", { lots: true }).piles[0]?.lot).toBeNull();
+    expect(draftFrom([closed], "", { lots: "open" }).piles[0]?.lot).toBeNull();
+    // In a correction it stays where it lies.
+    expect(draftFrom([closed], "", { lots: "own" }).piles[0]).toMatchObject({
+      lot: 12,
+      ownLot: 12,
+    });
   });
 });
 

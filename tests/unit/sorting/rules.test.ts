@@ -2,7 +2,8 @@ import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { instant } from "@/lib/core/time";
 import { judgeUndo, undoUntil } from "@/lib/core/undo";
-import { judgeSum, loadsOf, sortedAt, toleranceOf } from "@/lib/sorting/rules/table";
+import { loadsOf, toleranceOf } from "@/lib/scales/rules/loads";
+import { judgeSum, sortedAt } from "@/lib/sorting/rules/table";
 import type { ScaleSpec } from "@/lib/scales/rules/scale";
 
 /** Class III, e = d = 5 g: in service ± 5 g up to 2.5 kg, ± 10 g up to 10 kg. */

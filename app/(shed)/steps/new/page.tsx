@@ -3,6 +3,7 @@ import { NewStep } from "@/components/steps/new-step";
 import { PageHeader } from "@/components/ui/page-header";
 import { pageContext } from "@/lib/http/page-context";
 import { requirePerson } from "@/lib/platform/context";
+import { requireScheme } from "@/lib/platform/scheme";
 import { lotNumberSchema } from "@/lib/stock/contract/weighed";
 import { listLots } from "@/lib/stock/queries/lots";
 
@@ -19,7 +20,11 @@ export default async function NewStepPage({ searchParams }: Props) {
   return (
     <>
       <PageHeader title="New step" back={{ href: "/steps", label: "Steps" }} />
-      <NewStep helperId={requirePerson(ctx)} from={lot} />
+      <NewStep
+        helperId={requirePerson(ctx)}
+        from={lot}
+        timeZone={requireScheme(ctx.db.reader).timeZone}
+      />
     </>
   );
 }

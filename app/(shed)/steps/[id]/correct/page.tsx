@@ -4,6 +4,7 @@ import { CorrectStep } from "@/components/steps/correct-step";
 import { PageHeader } from "@/components/ui/page-header";
 import { pageContext } from "@/lib/http/page-context";
 import { requirePerson } from "@/lib/platform/context";
+import { requireScheme } from "@/lib/platform/scheme";
 import { undoStepEndpoint } from "@/lib/stock/contract/steps";
 import { getStep } from "@/lib/stock/queries/steps";
 import { STEP_KIND_NAMES } from "@/lib/stock/terms";
@@ -24,7 +25,11 @@ export default async function CorrectStepPage({ params }: Props) {
         lead="Say what should have stood there. It always goes through; what was taken since is named."
         back={{ href: `/steps/${step.stepId}`, label: "Back to the step" }}
       />
-      <CorrectStep step={step} helperId={requirePerson(ctx)} />
+      <CorrectStep
+        step={step}
+        helperId={requirePerson(ctx)}
+        timeZone={requireScheme(ctx.db.reader).timeZone}
+      />
     </>
   );
 }

@@ -5,7 +5,7 @@ import { ACTION_WORDS } from "./terms";
 /** "Corrected a weigh-in"; an action that has no words yet is shown as it is stored. */
 export function actionWords(action: string): string {
   return Object.hasOwn(ACTION_WORDS, action)
-    ? (ACTION_WORDS[action as keyof typeof ACTION_WORDS] ?? action)
+    ? ACTION_WORDS[action as keyof typeof ACTION_WORDS]
     : action;
 }
 

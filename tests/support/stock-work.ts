@@ -1,4 +1,5 @@
 /** What tests of the stock send and read: counts, steps, rows of the database. */
+import type { IdentifyLotInput, MergeLotInput } from "@/lib/stock/contract/moves";
 import { newId } from "@/lib/core/ids";
 import { saveStep } from "@/lib/stock/commands/save-step";
 import type { CountLotInput } from "@/lib/stock/contract/counts";
@@ -66,3 +67,44 @@ export const save = (of: StockRoom, more: object, at = NOON): StepReceipt => {
   const input = step(of, more);
   return saveStep(of.ctx("lead", at, input), input);
 };
+
+/** Two lots of one material: the first is closed, so that the second opened. */
+export function twoLots(of: StockRoom): [number, number] {
+  const first = of.fill(2000, {}, 0);
+  of.db.writer.client
+    .prepare("update lots set closed_at = ?, closed_for = 'full' where number = ?")
+    .run(NOON, first);
+  return [first, of.fill(1000, {}, 1)];
+}
+
+export const merge = (
+  number: number,
+  toNumber: number,
+  more: Partial<MergeLotInput> = {},
+): MergeLotInput => ({
+  requestId: newId(NOON),
+  number,
+  toNumber,
+  amount: { how: "all" },
+  count: null,
+  occurredAt: NOON,
+  ...more,
+});
+
+export const taken = (of: StockRoom, grams: number, all = false) => ({
+  how: "taken" as const,
+  all,
+  ...of.weighed(grams),
+});
+
+export const identify = (number: number): IdentifyLotInput => ({
+  requestId: newId(NOON),
+  number,
+  polymer: "PP",
+  kind: "tubs",
+  colourCode: "white",
+  method: "float",
+  amount: { how: "all" },
+  count: null,
+  occurredAt: NOON,
+});

@@ -98,7 +98,7 @@ describe("searching the audit", () => {
   });
 
   it("is the coordinator's alone", () => {
-    expect(() => searchAudit(scheme.ctx("lead"), {})).toThrowError(AppError);
+    expect(() => searchAudit(scheme.ctx("lead"), {})).toThrow(AppError);
     expect(
       listActors(scheme.ctx("coordinator"))
         .map(({ id }) => id)

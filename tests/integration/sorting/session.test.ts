@@ -1,7 +1,7 @@
 /** Several bags on one table, put aside and taken up, and sessions that are corrected. */
 import { afterEach, beforeEach, describe, expect, it } from "vitest";
 import { AppError, type ErrorCode } from "@/lib/core/errors";
-import { newId, type Id, type SortingId } from "@/lib/core/ids";
+import { newId, type SortingId } from "@/lib/core/ids";
 import { instant } from "@/lib/core/time";
 import { heldBy } from "@/lib/ledger/queries/entries";
 import { UNSORTED } from "@/lib/ledger/terms";
@@ -118,16 +118,18 @@ describe("several bags on one table", () => {
   });
 });
 
+type Saving = {
+  version?: number;
+  content?: string;
+  who?: "volunteer" | "lead";
+  draft?: SortingId;
+};
+
 describe("a session that is put aside", () => {
   const id = newId<"sorting">(NOON);
   const save = (
     bags: readonly WeighedIn[],
-    {
-      version = 0,
-      content = "{}",
-      who = "volunteer" as "volunteer" | "lead",
-      draft = id as Id<"sorting">,
-    } = {},
+    { version = 0, content = "{}", who = "volunteer", draft = id }: Saving = {},
   ) =>
     saveDraft(shed.ctx(who), { id: draft, version, codes: bags.map(({ code }) => code), content });
 

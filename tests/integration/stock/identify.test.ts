@@ -1,36 +1,16 @@
 import { afterEach, beforeEach, describe, expect, it } from "vitest";
-import { newId } from "@/lib/core/ids";
 import { identifyLot } from "@/lib/stock/commands/move-lot";
-import type { IdentifyLotInput } from "@/lib/stock/contract/moves";
 import { getLotRecord } from "@/lib/stock/queries/lot-record";
 import { commandCases, refusalOf } from "../../support/command-cases";
-import { newScheme, NOON } from "../../support/scheme";
+import { newScheme } from "../../support/scheme";
 import { stockRoom, type StockRoom } from "../../support/stock-room";
-import { rows } from "../../support/stock-work";
+import { identify, rows, taken } from "../../support/stock-work";
 
 let room: StockRoom;
 beforeEach(() => {
   room = stockRoom(newScheme());
 });
 afterEach(() => room.close());
-
-const taken = (of: StockRoom, grams: number, all = false) => ({
-  how: "taken" as const,
-  all,
-  ...of.weighed(grams),
-});
-
-const identify = (number: number): IdentifyLotInput => ({
-  requestId: newId(NOON),
-  number,
-  polymer: "PP",
-  kind: "tubs",
-  colourCode: "white",
-  method: "float",
-  amount: { how: "all" },
-  count: null,
-  occurredAt: NOON,
-});
 
 describe("identifying", () => {
   commandCases({

@@ -5,54 +5,19 @@ import { correctMove } from "@/lib/stock/commands/correct-move";
 import { countLot } from "@/lib/stock/commands/count-lot";
 import { identifyLot, mergeLot, splitLot } from "@/lib/stock/commands/move-lot";
 import { undoMove } from "@/lib/stock/commands/undo-move";
-import type { CorrectMoveInput, IdentifyLotInput, MergeLotInput } from "@/lib/stock/contract/moves";
+import type { CorrectMoveInput } from "@/lib/stock/contract/moves";
 import { listLotMovements } from "@/lib/stock/queries/lot-movements";
 import { listLotMoves, LOT_MOVES_SQL } from "@/lib/stock/queries/moves";
 import { commandCases, refusalOf } from "../../support/command-cases";
 import { newScheme, NOON } from "../../support/scheme";
 import { stockRoom, type StockRoom } from "../../support/stock-room";
-import { rows } from "../../support/stock-work";
+import { identify, merge, rows, twoLots } from "../../support/stock-work";
 
 let room: StockRoom;
 beforeEach(() => {
   room = stockRoom(newScheme());
 });
 afterEach(() => room.close());
-
-/** Two lots of one material: the first is closed, so that the second opened. */
-function twoLots(of: StockRoom): [number, number] {
-  const first = of.fill(2000, {}, 0);
-  of.db.writer.client
-    .prepare("update lots set closed_at = ?, closed_for = 'full' where number = ?")
-    .run(NOON, first);
-  return [first, of.fill(1000, {}, 1)];
-}
-
-const merge = (
-  number: number,
-  toNumber: number,
-  more: Partial<MergeLotInput> = {},
-): MergeLotInput => ({
-  requestId: newId(NOON),
-  number,
-  toNumber,
-  amount: { how: "all" },
-  count: null,
-  occurredAt: NOON,
-  ...more,
-});
-
-const identify = (number: number): IdentifyLotInput => ({
-  requestId: newId(NOON),
-  number,
-  polymer: "PP",
-  kind: "tubs",
-  colourCode: "white",
-  method: "float",
-  amount: { how: "all" },
-  count: null,
-  occurredAt: NOON,
-});
 
 describe("taking a move back", () => {
   const undo = (id: Id<"lot-move">) => ({ requestId: newId(NOON), id });

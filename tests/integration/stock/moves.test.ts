@@ -1,12 +1,12 @@
 import { afterEach, beforeEach, describe, expect, it } from "vitest";
 import { newId } from "@/lib/core/ids";
 import { identifyLot, mergeLot, splitLot } from "@/lib/stock/commands/move-lot";
-import type { IdentifyLotInput, MergeLotInput } from "@/lib/stock/contract/moves";
+import type { MergeLotInput } from "@/lib/stock/contract/moves";
 import { getLotRecord } from "@/lib/stock/queries/lot-record";
 import { commandCases, refusalOf } from "../../support/command-cases";
 import { newScheme, NOON } from "../../support/scheme";
 import { stockRoom, type StockRoom } from "../../support/stock-room";
-import { rows } from "../../support/stock-work";
+import { identify, merge, rows, taken, twoLots } from "../../support/stock-work";
 
 let room: StockRoom;
 beforeEach(() => {
@@ -21,46 +21,6 @@ const partsOf = (of: StockRoom, number: number) =>
       where l.number = ? and p.dim = 'O' order by p.key`,
     number,
   ).map((part) => (part as { grams: number }).grams);
-
-/** Two lots of one material: the first is closed, so that the second opened. */
-function twoLots(of: StockRoom): [number, number] {
-  const first = of.fill(2000, {}, 0);
-  of.db.writer.client
-    .prepare("update lots set closed_at = ?, closed_for = 'full' where number = ?")
-    .run(NOON, first);
-  return [first, of.fill(1000, {}, 1)];
-}
-
-const merge = (
-  number: number,
-  toNumber: number,
-  more: Partial<MergeLotInput> = {},
-): MergeLotInput => ({
-  requestId: newId(NOON),
-  number,
-  toNumber,
-  amount: { how: "all" },
-  count: null,
-  occurredAt: NOON,
-  ...more,
-});
-const taken = (of: StockRoom, grams: number, all = false) => ({
-  how: "taken" as const,
-  all,
-  ...of.weighed(grams),
-});
-
-const identify = (number: number): IdentifyLotInput => ({
-  requestId: newId(NOON),
-  number,
-  polymer: "PP",
-  kind: "tubs",
-  colourCode: "white",
-  method: "float",
-  amount: { how: "all" },
-  count: null,
-  occurredAt: NOON,
-});
 
 describe("merging", () => {
   commandCases({

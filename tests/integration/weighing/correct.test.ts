@@ -1,5 +1,5 @@
 import { afterEach, beforeEach, describe, expect, it } from "vitest";
-import { AppError, type ErrorCode } from "@/lib/core/errors";
+import type { ErrorCode } from "@/lib/core/errors";
 import { newId, type WeighInId } from "@/lib/core/ids";
 import { instant, type Instant } from "@/lib/core/time";
 import { ensureHolder, ensureMaterial } from "@/lib/ledger/commands/define";
@@ -10,6 +10,7 @@ import { correctWeighIn } from "@/lib/weighing/commands/correct";
 import { undoWeighIn } from "@/lib/weighing/commands/undo-weigh-in";
 import type { CorrectWeighInInput } from "@/lib/weighing/contract/corrections";
 import { getStoredWeighIn, getWeighInPage } from "@/lib/weighing/queries/stored";
+import { refusalOf } from "@/tests/support/command-cases";
 import { NOON, type TestScheme } from "@/tests/support/scheme";
 import { posted, weighingDesk, type WeighingDesk } from "@/tests/support/weighing-desk";
 
@@ -70,14 +71,8 @@ function correct(
   return correctWeighIn(desk.ctx(who, now, input), input);
 }
 
-function refusedWith(code: ErrorCode, work: () => unknown): void {
-  expect(work).toThrowError(AppError);
-  try {
-    work();
-  } catch (error) {
-    expect((error as AppError).code).toBe(code);
-  }
-}
+const refusedWith = (code: ErrorCode, work: () => unknown): void =>
+  expect(refusalOf(work)).toBe(code);
 
 const bagState = (code: string) =>
   rows<{ state: string }>("select state from bags where code = ?", code)[0]?.state;

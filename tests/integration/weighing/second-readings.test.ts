@@ -1,5 +1,5 @@
 import { afterEach, beforeEach, describe, expect, it } from "vitest";
-import { AppError, type ErrorCode } from "@/lib/core/errors";
+import type { ErrorCode } from "@/lib/core/errors";
 import { newId, type WeighInId } from "@/lib/core/ids";
 import { instant } from "@/lib/core/time";
 import { verifyLedger } from "@/lib/ledger/queries/verify";
@@ -7,6 +7,7 @@ import { acceptReading } from "@/lib/weighing/commands/correct";
 import { discardReading } from "@/lib/weighing/commands/discard";
 import { undoWeighIn } from "@/lib/weighing/commands/undo-weigh-in";
 import { listForReview } from "@/lib/weighing/queries/stored";
+import { refusalOf } from "@/tests/support/command-cases";
 import { NOON, type TestScheme } from "@/tests/support/scheme";
 import { posted, weighingDesk, type WeighingDesk } from "@/tests/support/weighing-desk";
 
@@ -25,14 +26,8 @@ const rows = <T>(sql: string, ...values: unknown[]): T[] =>
   desk.db.reader.client.prepare(sql).all(...values) as T[];
 const YESTERDAY_PLUS = instant(NOON + 26 * 3_600_000);
 
-function refusedWith(code: ErrorCode, work: () => unknown): void {
-  expect(work).toThrowError(AppError);
-  try {
-    work();
-  } catch (error) {
-    expect((error as AppError).code).toBe(code);
-  }
-}
+const refusedWith = (code: ErrorCode, work: () => unknown): void =>
+  expect(refusalOf(work)).toBe(code);
 
 const bagState = (code: string) =>
   rows<{ state: string }>("select state from bags where code = ?", code)[0]?.state;

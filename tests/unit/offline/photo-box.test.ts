@@ -1,39 +1,8 @@
 import { describe, expect, it } from "vitest";
 import { PhotoBox, type PhotoStore } from "@/lib/offline/photo-box";
-import {
-  newPhotoItem,
-  type NewPhoto,
-  type PhotoItem,
-  type PhotoOutcome,
-} from "@/lib/offline/photo-queue";
+import { newPhotoItem, type PhotoItem, type PhotoOutcome } from "@/lib/offline/photo-queue";
+import { made, trouble, acknowledged } from "@/tests/support/photo-items";
 import type { Photo } from "@/lib/uploads/contract";
-
-const made = (number: number, more: Partial<NewPhoto> = {}): NewPhoto => ({
-  photoId: `p${String(number).padStart(2, "0")}`,
-  subjectKind: "weigh-in",
-  subjectId: "bag-1",
-  purpose: "view",
-  helper: "ann",
-  madeAt: 1000 + number,
-  blob: new Blob([String(number)]),
-  width: 4,
-  height: 3,
-  middle: null,
-  ...more,
-});
-const trouble = (code: string) => ({ code, values: {} });
-const acknowledged = (item: PhotoItem): PhotoOutcome => ({
-  kind: "sent",
-  photo: {
-    id: item.photoId,
-    purpose: item.purpose,
-    width: 4,
-    height: 3,
-    addedAt: 1,
-    addedBy: "Ann",
-    lab: null,
-  },
-});
 
 /** Storage that outlives a PhotoBox, as IndexedDB outlives a page. */
 function storage(): PhotoStore & { items: Map<string, PhotoItem> } {

@@ -1,5 +1,4 @@
 import { describe, expect, it } from "vitest";
-import { type PhotoStore } from "@/lib/offline/photo-box";
 import {
   afterPhotoSending,
   markPhotoRetried,
@@ -7,51 +6,8 @@ import {
   newPhotoItem,
   photosToSend,
   photoViewFor,
-  type NewPhoto,
-  type PhotoItem,
-  type PhotoOutcome,
 } from "@/lib/offline/photo-queue";
-
-const made = (number: number, more: Partial<NewPhoto> = {}): NewPhoto => ({
-  photoId: `p${String(number).padStart(2, "0")}`,
-  subjectKind: "weigh-in",
-  subjectId: "bag-1",
-  purpose: "view",
-  helper: "ann",
-  madeAt: 1000 + number,
-  blob: new Blob([String(number)]),
-  width: 4,
-  height: 3,
-  middle: null,
-  ...more,
-});
-const trouble = (code: string) => ({ code, values: {} });
-const acknowledged = (item: PhotoItem): PhotoOutcome => ({
-  kind: "sent",
-  photo: {
-    id: item.photoId,
-    purpose: item.purpose,
-    width: 4,
-    height: 3,
-    addedAt: 1,
-    addedBy: "Ann",
-    lab: null,
-  },
-});
-
-/** Storage that outlives a PhotoBox, as IndexedDB outlives a page. */
-function storage(): PhotoStore & { items: Map<string, PhotoItem> } {
-  const items = new Map<string, PhotoItem>();
-  return {
-    items,
-    all: async () => [...items.values()],
-    put: async (item) => void items.set(item.photoId, item),
-    replace: async (item) => {
-      if (items.has(item.photoId)) items.set(item.photoId, item);
-    },
-    remove: async (id) => void items.delete(id),
-  };
-}
+import { made, trouble, acknowledged } from "@/tests/support/photo-items";
 
 describe("what a photo goes through", () => {
   const item = markPhotoSending(newPhotoItem(made(1)));

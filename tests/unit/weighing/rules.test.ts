@@ -1,7 +1,7 @@
 import * as fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { sentence } from "@/lib/core/messages";
-import { day, dayOf, instant, type Instant } from "@/lib/core/time";
+import { day, instant } from "@/lib/core/time";
 import { mayStillUndo } from "@/lib/core/undo";
 import {
   isBelowMinimum,

@@ -3,7 +3,7 @@
  * sorted, stepped, merged, split, counted, taken away, proven, undone and corrected, every balance, composition and
  * total is what an array of movements says, no holder is below zero, every report row closes, the chain is valid.
  *
- * BISMAR_BENCH_ACTS sets how long a history is.
+ * BISMAR_BENCH_ACTS sets how long a history is, BISMAR_BENCH_SEEDS how many there are besides the fixed ones.
  */
 import { afterAll, describe, expect, it, vi } from "vitest";
 import { seeded } from "@/db/seed/random";
@@ -29,7 +29,13 @@ vi.mock("@/lib/ledger/commands/post", async (load) => {
 });
 
 const LENGTH = Number(process.env.BISMAR_BENCH_ACTS ?? 140);
-const SEEDS = [20_261_201, 4, 271_828, 314_159, Date.now() % 2 ** 31];
+const SEEDS = [
+  ...[20_261_201, 4, 271_828, 314_159, 847_783_853],
+  ...Array.from(
+    { length: Number(process.env.BISMAR_BENCH_SEEDS ?? 1) },
+    (_, at) => (Date.now() + at * 7919) % 2 ** 31,
+  ),
+];
 const BETWEEN_CHECKS = 20;
 
 const plain = (drafts: readonly Draft[]) =>

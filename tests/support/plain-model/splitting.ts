@@ -165,7 +165,12 @@ export function splitLines(book: Book, kind: EntryKind, lines: readonly Given[])
   }
   const outputs = lines
     .filter((line) => line.grams > 0)
-    .sort((a, b) => rank(a) - rank(b) || (a.holderId ?? 0) - (b.holderId ?? 0));
+    .sort(
+      (a, b) =>
+        rank(a) - rank(b) ||
+        (a.holderId ?? 0) - (b.holderId ?? 0) ||
+        Number((a.cause ?? "") > (b.cause ?? "")) - Number((a.cause ?? "") < (b.cause ?? "")),
+    );
   for (const line of lines.filter(isGain)) enter(line, gained(book, line, pool, outputs[0]));
 
   const fromRun = lines.some((line) => line.account === "run" && line.grams < 0);

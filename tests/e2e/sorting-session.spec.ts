@@ -136,12 +136,16 @@ test("two people at one table see each other, and neither loses what was typed",
   await expectAccessible(other);
   await choice.getByRole("button", { name: "Put both together" }).click();
   await expect(other.getByText("0.800 kg still to weigh.")).toBeVisible();
+  // Out of reach, so that this pile is typed before the word of the other's saving arrives.
+  await page.route("**/api/sortings/drafts/**", (route) => route.abort());
+  await addPile(page, "Pink", "1.5");
+  await expect(page.getByText("Kept on this phone; the server does not answer.")).toBeVisible();
   await addPile(other, "Black", "0.8");
   await save(other).click();
   await expect(other.getByText("Sorted by Test lead")).toBeVisible();
 
   // The first to save won; the second is told, and the piles are still there.
-  await addPile(page, "Pink", "1.5");
+  await page.unroute("**/api/sortings/drafts/**");
   await expect(page.getByText("It was saved meanwhile")).toBeVisible({ timeout: 30_000 });
   await expect(page.getByText("Pink HDPE")).toBeVisible();
   await expect(save(page)).toBeHidden();

@@ -49,7 +49,7 @@ test("keeps a ticket while the server is gone, through a reload, and sends it on
   // The server is back: the timer alone sends it, within a quarter of a minute.
   await page.unroute("**/api/weigh-ins");
   await expect(waiting(page)).toBeHidden({ timeout: 30_000 });
-  await expect(tickets(page).getByText(shown(code))).toBeVisible();
+  await expect(tickets(page).getByRole("link", { name: shown(code), exact: true })).toBeVisible();
   expect(desk.netOf(code)).toEqual([{ state: "posted", grams: 2500 }]);
 });
 

@@ -1,6 +1,6 @@
 "use client";
 
-import { Failure } from "@/components/shell/failure";
+import { PlainFailure } from "@/components/shell/plain-failure";
 import "./globals.css";
 
 type GlobalErrorProps = { error: Error & { digest?: string } };
@@ -13,7 +13,7 @@ export default function GlobalError({ error }: GlobalErrorProps) {
         <title>This page failed · Bismar</title>
       </head>
       <body className="flex min-h-dvh flex-col font-body antialiased">
-        <Failure digest={error.digest} onRetry={() => window.location.reload()} />
+        <PlainFailure digest={error.digest} onRetry={() => window.location.reload()} />
       </body>
     </html>
   );

@@ -1,9 +1,9 @@
 "use client";
 
-import { Failure } from "@/components/shell/failure";
+import { LateFailure } from "@/components/shell/late-failure";
 
 type ErrorProps = { error: Error & { digest?: string }; reset: () => void };
 
 export default function ErrorPage({ error, reset }: ErrorProps) {
-  return <Failure digest={error.digest} onRetry={reset} inFrame />;
+  return <LateFailure digest={error.digest} onRetry={reset} inFrame />;
 }

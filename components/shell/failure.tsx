@@ -2,7 +2,7 @@ import { Button } from "@/components/ui/button";
 import { ButtonAnchor } from "@/components/ui/button-anchor";
 import { DeadEnd } from "./dead-end";
 
-type FailureProps = {
+export type FailureProps = {
   /** The number under which the program's log has the cause; absent when it failed in the browser. */
   digest?: string;
   onRetry: () => void;

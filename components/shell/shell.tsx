@@ -2,7 +2,7 @@ import type { ReactNode } from "react";
 import { BismarMark } from "@/components/ui/bismar-mark";
 import type { Role } from "@/lib/core/permissions";
 import { BarTitle } from "./bar-title";
-import { MoreSheet } from "./more-sheet";
+import { MoreButton } from "./more-button";
 import { PlaceLink } from "./place-link";
 import { barFor, placesFor } from "./places";
 import { QueueSlot } from "./queue-slot";
@@ -71,7 +71,7 @@ export function Shell({ role, schemeName, queue, children }: ShellProps) {
           {bar.map((place) => (
             <PlaceLink key={place.id} place={place} shape="bar" />
           ))}
-          <MoreSheet places={more} />
+          <MoreButton places={more} />
         </div>
       </nav>
     </div>

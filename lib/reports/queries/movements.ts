@@ -29,7 +29,7 @@ export type MovementRow = {
 };
 
 /** Lines of a page: what is live at once fits a young generation of 8 MB, so that it costs no memory and little time. */
-const PAGE = 100;
+const PAGE = 50;
 
 /**
  * Walks lines by their key, which is the order of recording. A period is found in it by skipping entries of

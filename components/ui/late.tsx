@@ -1,7 +1,7 @@
 "use client";
 
 import { createElement, useEffect, useState, type ComponentType } from "react";
-import { Notice } from "@/components/ui/notice";
+import { Notice } from "./notice";
 
 type Props<Given extends object> = {
   /** Constant, such as a function outside the component. */
@@ -38,7 +38,7 @@ export function Late<Given extends object>({ load, given }: Props<Given>) {
     return (
       <Notice tone="warn" title="Not opened" live="status" className="mb-3">
         The server did not answer, so this part could not be fetched. What you typed is still here;
-        type the code, or try again in a moment.
+        try again in a moment.
       </Notice>
     );
   }

@@ -9,11 +9,15 @@ import { formatCode } from "@/lib/core/bag-code";
 import { dayOf, formatDay } from "@/lib/core/time";
 import type { SortedBag } from "@/lib/sorting/contract/sortings";
 import type { BagWeighIn } from "@/lib/weighing/queries/weigh-ins";
+import { BagCodes } from "./bag-codes";
 import { ShedBagSorted } from "./shed-bag-sorted";
 import { ShedBagWeighing } from "./shed-bag-weighing";
 
 type Props = {
   bag: Bag;
+  /** Every code that opens it, the first one first. */
+  codes: readonly string[];
+  mayTag: boolean;
   weighIns: readonly BagWeighIn[];
   sorted: SortedBag | null;
   timeZone: string;
@@ -23,7 +27,16 @@ type Props = {
 };
 
 /** One bag as the shed knows it: where it came from, its weighings with their photos, what it was sorted into. */
-export function ShedBag({ bag, weighIns, sorted, timeZone, helperId, mayRemovePhotos }: Props) {
+export function ShedBag({
+  bag,
+  codes,
+  mayTag,
+  weighIns,
+  sorted,
+  timeZone,
+  helperId,
+  mayRemovePhotos,
+}: Props) {
   const lots = weighIns.flatMap(({ lotNumber }) => (lotNumber === null ? [] : [lotNumber]));
   return (
     <QueryProvider>
@@ -45,6 +58,7 @@ export function ShedBag({ bag, weighIns, sorted, timeZone, helperId, mayRemovePh
               {BAG_STATE_NAMES[bag.state]}, since {formatDay(dayOf(bag.stateSince, timeZone))}
             </strong>
           </p>
+          <BagCodes codes={codes} mayTag={mayTag && bag.state !== "closed"} />
           {weighIns.length === 0 ? (
             <Ticket>
               <p className="text-soft">

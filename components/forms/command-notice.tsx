@@ -1,6 +1,6 @@
 import { Notice } from "@/components/ui/notice";
 import type { ProblemDocument } from "@/lib/core/errors";
-import { UNREACHABLE_SENTENCE } from "./problem-document";
+import { UNANSWERED_SENTENCE } from "./unanswered";
 
 type CommandNoticeProps = {
   command: { problem: ProblemDocument | null; unreachable: boolean };
@@ -13,8 +13,8 @@ export function CommandNotice({ command, shownFields = [] }: CommandNoticeProps)
   const { problem, unreachable } = command;
   if (unreachable) {
     return (
-      <Notice tone="bad" live="alert" title="Not saved">
-        {UNREACHABLE_SENTENCE}
+      <Notice tone="warn" live="alert" title="No answer">
+        {UNANSWERED_SENTENCE}
       </Notice>
     );
   }

@@ -20,9 +20,9 @@ export class UnreachableError extends Error {
   }
 }
 
-/** What a page says when no answer came and nothing was queued. */
+/** What a page says when no answer came; what was or was not saved shows itself otherwise. */
 export const UNREACHABLE_SENTENCE =
-  "The server did not answer. Nothing was saved; what you typed is still here, so try again in a moment.";
+  "The server did not answer. What you typed is still here, so try again in a moment.";
 
 const isJson = (response: Response): boolean =>
   /^application\/(problem\+)?json\b/i.test(response.headers.get("content-type") ?? "");

@@ -3,9 +3,9 @@
 import { useCallback, useMemo, useRef, useState } from "react";
 import type { Endpoint } from "@/lib/core/endpoint";
 import type { ProblemDocument } from "@/lib/core/errors";
-import { newId } from "@/lib/core/ids";
 import { fillPath, type AddressOf, type InputOf, type OutputOf } from "./fetch-endpoint";
 import { fieldErrorsOf, ProblemError, UnreachableError } from "./problem-document";
+import { requestToSend, type Sent, type SendOptions } from "./request-to-send";
 import { sendRequest } from "./send-request";
 
 type OmitEach<T, Key extends PropertyKey> = T extends unknown ? Omit<T, Key> : never;
@@ -17,8 +17,8 @@ export type CommandInput<E extends Endpoint> = OmitEach<InputOf<E>, "requestId">
  * How a write ended.
  * - `done`: the server's receipt.
  * - `refused`: a problem document; nothing was saved.
- * - `unreachable`: no answer came; it may or may not have been saved. Sending the same input again is safe,
- *   because the hook keeps its request id.
+ * - `unreachable`: no answer came; it may or may not have been saved. Sending again is safe, because the hook
+ *   keeps the request id until an answer came.
  */
 export type CommandResult<E extends Endpoint> =
   | { kind: "done"; receipt: OutputOf<E>; requestId: string }
@@ -26,7 +26,10 @@ export type CommandResult<E extends Endpoint> =
   | { kind: "unreachable"; requestId: string };
 
 export type Command<E extends Endpoint> = {
-  send(input: CommandInput<E>, options?: { requestId?: string }): Promise<CommandResult<E>>;
+  send(
+    input: CommandInput<E>,
+    options?: SendOptions<keyof CommandInput<E> & string>,
+  ): Promise<CommandResult<E>>;
   pending: boolean;
   /** The last refusal, until the next send or reset. */
   problem: ProblemDocument | null;
@@ -52,30 +55,27 @@ export function useCommand<E extends Endpoint>(endpoint: E | AddressOf<E>): Comm
     problem: ProblemDocument | null;
     unreachable: boolean;
   }>({ pending: false, problem: null, unreachable: false });
-  const unanswered = useRef<{ content: string; requestId: string } | null>(null);
+  const unanswered = useRef<Sent | null>(null);
 
   const send = useCallback(
-    async (
-      input: CommandInput<E>,
-      options: { requestId?: string } = {},
-    ): Promise<CommandResult<E>> => {
+    async (input: CommandInput<E>, options: SendOptions = {}): Promise<CommandResult<E>> => {
       const { path, rest } = fillPath(template, input);
-      const content = JSON.stringify([path, rest]);
-      const again = unanswered.current?.content === content ? unanswered.current.requestId : null;
-      const requestId = options.requestId ?? again ?? newId();
+      const sent = requestToSend(path, rest, options, unanswered.current);
+      const { requestId } = sent;
       setState({ pending: true, problem: null, unreachable: false });
       try {
-        const receipt = await sendRequest(method, path, JSON.stringify({ ...rest, requestId }));
+        const receipt = await sendRequest(method, path, sent.rawBody);
         unanswered.current = null;
         setState({ pending: false, problem: null, unreachable: false });
         return { kind: "done", receipt: receipt as OutputOf<E>, requestId };
       } catch (error) {
         if (error instanceof ProblemError) {
-          unanswered.current = null;
+          // Another refusal (signed out, busy) does not tell what became of a sending before it.
+          if (error.problem.code === "request-id-reused") unanswered.current = null;
           setState({ pending: false, problem: error.problem, unreachable: false });
           return { kind: "refused", problem: error.problem, requestId };
         }
-        unanswered.current = { content, requestId };
+        unanswered.current = sent;
         setState({ pending: false, problem: null, unreachable: true });
         if (error instanceof UnreachableError) return { kind: "unreachable", requestId };
         throw error;

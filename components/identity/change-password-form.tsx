@@ -1,7 +1,7 @@
 "use client";
 
 import { useState, type SubmitEvent } from "react";
-import { UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
+import { UNANSWERED_SENTENCE } from "@/components/forms/unanswered";
 import { useCommand } from "@/components/forms/use-command";
 import { Button } from "@/components/ui/button";
 import { Notice } from "@/components/ui/notice";
@@ -40,7 +40,7 @@ export function ChangePasswordForm({ email }: { email: string }) {
   }
 
   const { fieldErrors } = change;
-  const refusal = change.unreachable ? UNREACHABLE_SENTENCE : change.problem?.detail;
+  const refusal = change.unreachable ? UNANSWERED_SENTENCE : change.problem?.detail;
   return (
     <form method="post" onSubmit={submit} className="flex flex-col gap-4">
       {ended !== null ? (
@@ -49,7 +49,7 @@ export function ChangePasswordForm({ email }: { email: string }) {
         </Notice>
       ) : null}
       {refusal && !fieldErrors.password && !fieldErrors.present ? (
-        <Notice tone="bad" live="alert" title="Not changed">
+        <Notice tone="bad" live="alert" title={change.unreachable ? "No answer" : "Not changed"}>
           {refusal}
         </Notice>
       ) : null}

@@ -1,7 +1,7 @@
 "use client";
 
 import { useState, type SubmitEvent } from "react";
-import { UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
+import { UNANSWERED_SENTENCE } from "@/components/forms/unanswered";
 import { useCommand } from "@/components/forms/use-command";
 import { Button } from "@/components/ui/button";
 import { Notice } from "@/components/ui/notice";
@@ -27,7 +27,7 @@ export function ForgottenForm() {
     if (result.kind === "done") setSentTo(email);
   }
 
-  const refusal = ask.unreachable ? UNREACHABLE_SENTENCE : ask.problem?.detail;
+  const refusal = ask.unreachable ? UNANSWERED_SENTENCE : ask.problem?.detail;
   return (
     <form method="post" onSubmit={submit} className="flex flex-col gap-4">
       <p className="text-soft">You get a mail with a link. It works once and for a day.</p>
@@ -38,7 +38,7 @@ export function ForgottenForm() {
         </Notice>
       ) : null}
       {refusal && !ask.fieldErrors.email ? (
-        <Notice tone="bad" live="alert" title="Not sent">
+        <Notice tone="bad" live="alert" title={ask.unreachable ? "No answer" : "Not sent"}>
           {refusal}
         </Notice>
       ) : null}

@@ -2,7 +2,7 @@
 
 import { useRouter } from "next/navigation";
 import { useId, useState, type SubmitEvent } from "react";
-import { UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
+import { UNANSWERED_SENTENCE } from "@/components/forms/unanswered";
 import { useCommand } from "@/components/forms/use-command";
 import { Button } from "@/components/ui/button";
 import { Dialog } from "@/components/ui/dialog";
@@ -42,7 +42,7 @@ export function InviteDialog() {
   }
 
   const { fieldErrors } = invite;
-  const refusal = invite.unreachable ? UNREACHABLE_SENTENCE : invite.problem?.detail;
+  const refusal = invite.unreachable ? UNANSWERED_SENTENCE : invite.problem?.detail;
   return (
     <>
       <Button
@@ -69,7 +69,7 @@ export function InviteDialog() {
       >
         <form id={formId} onSubmit={submit} className="flex flex-col gap-4">
           {refusal && Object.keys(fieldErrors).length === 0 ? (
-            <Notice tone="bad" live="alert" title="Not sent">
+            <Notice tone="bad" live="alert" title={invite.unreachable ? "No answer" : "Not sent"}>
               {refusal}
             </Notice>
           ) : null}

@@ -2,7 +2,7 @@
 
 import { useRouter } from "next/navigation";
 import { useState } from "react";
-import { UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
+import { UNANSWERED_SENTENCE } from "@/components/forms/unanswered";
 import { useCommand } from "@/components/forms/use-command";
 import { Button } from "@/components/ui/button";
 import { Dialog } from "@/components/ui/dialog";
@@ -46,15 +46,16 @@ export function PersonDialog({ person, onClose }: PersonDialogProps) {
     else setDone(word);
   }
 
-  const refusal = commands.some((command) => command.unreachable)
-    ? UNREACHABLE_SENTENCE
+  const unanswered = commands.some((command) => command.unreachable);
+  const refusal = unanswered
+    ? UNANSWERED_SENTENCE
     : commands.find((command) => command.problem)?.problem?.detail;
   return (
     <Dialog open onClose={onClose} title={person.name}>
       <div className="flex flex-col gap-5">
         {done ? <Notice tone="ok" live="status" title={done} /> : null}
         {refusal ? (
-          <Notice tone="bad" live="alert" title="Not changed">
+          <Notice tone="bad" live="alert" title={unanswered ? "No answer" : "Not changed"}>
             {refusal}
           </Notice>
         ) : null}

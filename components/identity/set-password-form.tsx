@@ -1,7 +1,7 @@
 "use client";
 
 import { useState, type SubmitEvent } from "react";
-import { UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
+import { UNANSWERED_SENTENCE } from "@/components/forms/unanswered";
 import { useCommand } from "@/components/forms/use-command";
 import { Button } from "@/components/ui/button";
 import { ButtonLink } from "@/components/ui/button-link";
@@ -46,11 +46,11 @@ export function SetPasswordForm({ token, email }: SetPasswordFormProps) {
       />
     );
   }
-  const refusal = set.unreachable ? UNREACHABLE_SENTENCE : set.problem?.detail;
+  const refusal = set.unreachable ? UNANSWERED_SENTENCE : set.problem?.detail;
   return (
     <form method="post" onSubmit={submit} className="flex flex-col gap-4">
       {refusal && !set.fieldErrors.password ? (
-        <Notice tone="bad" live="alert" title="Not set">
+        <Notice tone="bad" live="alert" title={set.unreachable ? "No answer" : "Not set"}>
           {refusal}
         </Notice>
       ) : null}

@@ -1,6 +1,6 @@
 "use client";
 
-import { UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
+import { UNANSWERED_SENTENCE } from "@/components/forms/unanswered";
 import { useCommand } from "@/components/forms/use-command";
 import { Button } from "@/components/ui/button";
 import { Notice } from "@/components/ui/notice";
@@ -17,11 +17,15 @@ export function SignOutEverywhere() {
     if (result.kind === "done") window.location.assign("/sign-in");
   }
 
-  const refusal = everywhere.unreachable ? UNREACHABLE_SENTENCE : everywhere.problem?.detail;
+  const refusal = everywhere.unreachable ? UNANSWERED_SENTENCE : everywhere.problem?.detail;
   return (
     <div className="flex flex-col gap-3">
       {refusal ? (
-        <Notice tone="bad" live="alert" title="Not signed out">
+        <Notice
+          tone="bad"
+          live="alert"
+          title={everywhere.unreachable ? "No answer" : "Not signed out"}
+        >
           {refusal}
         </Notice>
       ) : null}

@@ -3,10 +3,8 @@
 import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm } from "react-hook-form";
 import type * as z from "zod";
-import { CommandNotice } from "@/components/forms/command-notice";
+import { FormDialog } from "@/components/forms/form-dialog";
 import { useCommand } from "@/components/forms/use-command";
-import { Button } from "@/components/ui/button";
-import { Dialog } from "@/components/ui/dialog";
 import { SelectField } from "@/components/ui/select-field";
 import { TextField } from "@/components/ui/text-field";
 import { fieldSentence } from "@/lib/core/messages";
@@ -53,33 +51,23 @@ export function PointDialog({ point, onClose, onSaved }: PointDialogProps) {
     return code ? fieldSentence(code) : command.fieldErrors[field];
   };
   return (
-    <Dialog
-      open
-      onClose={onClose}
+    <FormDialog
       title={point ? `Change ${point.name}` : "Add a drop-off point"}
-      actions={
-        <>
-          <Button variant="quiet" onClick={onClose}>
-            Cancel
-          </Button>
-          <Button type="submit" form="point-form" busy={command.pending}>
-            {point ? "Save changes" : "Add the point"}
-          </Button>
-        </>
-      }
+      submit={point ? "Save changes" : "Add the point"}
+      onSubmit={save}
+      onClose={onClose}
+      command={command}
+      shownFields={["name", "kind"]}
     >
-      <form id="point-form" onSubmit={save} noValidate className="grid gap-4">
-        <CommandNotice command={command} shownFields={["name", "kind"]} />
-        <TextField
-          {...register("name")}
-          label="Name"
-          hint="As people call the place, such as Harbour Road Library."
-          error={errorOf("name")}
-          maxLength={80}
-          autoComplete="off"
-        />
-        <SelectField {...register("kind")} label="Kind" options={KINDS} error={errorOf("kind")} />
-      </form>
-    </Dialog>
+      <TextField
+        {...register("name")}
+        label="Name"
+        hint="As people call the place, such as Harbour Road Library."
+        error={errorOf("name")}
+        maxLength={80}
+        autoComplete="off"
+      />
+      <SelectField {...register("kind")} label="Kind" options={KINDS} error={errorOf("kind")} />
+    </FormDialog>
   );
 }

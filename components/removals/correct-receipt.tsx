@@ -2,11 +2,10 @@
 
 import { useRouter } from "next/navigation";
 import { useState } from "react";
-import { CommandNotice } from "@/components/forms/command-notice";
+import { FormDialog } from "@/components/forms/form-dialog";
 import { useCommand } from "@/components/forms/use-command";
 import { Button } from "@/components/ui/button";
 import { CheckField } from "@/components/ui/check-field";
-import { Dialog } from "@/components/ui/dialog";
 import type { Day } from "@/lib/core/time";
 import { correctReceiptEndpoint } from "@/lib/removals/contract/receipts";
 import type { ReceiptView } from "@/lib/removals/queries/removal-page";
@@ -51,51 +50,30 @@ export function CorrectReceipt({ removalId, receipt, day, today }: Props) {
         Correct the receipt
       </Button>
       {open ? (
-        <Dialog
-          open
-          onClose={() => setOpen(false)}
+        <FormDialog
           title={`Correct receipt ${receipt.number}`}
-          actions={
-            <>
-              <Button variant="quiet" onClick={() => setOpen(false)}>
-                Cancel
-              </Button>
-              <Button type="submit" form="correct-receipt" busy={save.pending}>
-                {none ? "Take it back" : "Save the correction"}
-              </Button>
-            </>
-          }
+          submit={none ? "Take it back" : "Save the correction"}
+          onSubmit={send}
+          onClose={() => setOpen(false)}
+          command={save}
+          shownFields={["reason", "replacement.number", "replacement.day"]}
         >
-          <form
-            id="correct-receipt"
-            noValidate
-            className="grid gap-4"
-            onSubmit={(event) => {
-              event.preventDefault();
-              void send();
-            }}
-          >
-            <CommandNotice
-              command={save}
-              shownFields={["reason", "replacement.number", "replacement.day"]}
+          <CheckField
+            label="There is no receipt"
+            checked={none}
+            onChange={(event) => setNone(event.target.checked)}
+          />
+          {none ? null : (
+            <ReceiptFields
+              draft={draft}
+              today={today}
+              asked={asked}
+              errors={errors}
+              onDraft={setDraft}
             />
-            <CheckField
-              label="There is no receipt"
-              checked={none}
-              onChange={(event) => setNone(event.target.checked)}
-            />
-            {none ? null : (
-              <ReceiptFields
-                draft={draft}
-                today={today}
-                asked={asked}
-                errors={errors}
-                onDraft={setDraft}
-              />
-            )}
-            <ReasonField value={reason} onValue={setReason} asked={asked} error={errors.reason} />
-          </form>
-        </Dialog>
+          )}
+          <ReasonField value={reason} onValue={setReason} asked={asked} error={errors.reason} />
+        </FormDialog>
       ) : null}
     </>
   );

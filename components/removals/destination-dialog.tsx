@@ -3,11 +3,9 @@
 import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm } from "react-hook-form";
 import type * as z from "zod";
-import { CommandNotice } from "@/components/forms/command-notice";
+import { FormDialog } from "@/components/forms/form-dialog";
 import { useCommand } from "@/components/forms/use-command";
-import { Button } from "@/components/ui/button";
 import { ChoiceTiles } from "@/components/ui/choice-tiles";
-import { Dialog } from "@/components/ui/dialog";
 import { TextField } from "@/components/ui/text-field";
 import { fieldSentence } from "@/lib/core/messages";
 import {
@@ -70,79 +68,69 @@ export function DestinationDialog({ destination, onClose, onSaved }: Props) {
     return issue ? fieldSentence(issue) : command.fieldErrors[field];
   };
   return (
-    <Dialog
-      open
-      onClose={onClose}
+    <FormDialog
       title={destination ? `Change ${destination.name}` : "Add a destination"}
-      actions={
-        <>
-          <Button variant="quiet" onClick={onClose}>
-            Cancel
-          </Button>
-          <Button type="submit" form="destination-form" busy={command.pending}>
-            {destination ? "Save changes" : "Add it"}
-          </Button>
-        </>
-      }
+      submit={destination ? "Save changes" : "Add it"}
+      onSubmit={save}
+      onClose={onClose}
+      command={command}
+      shownFields={FIELDS}
     >
-      <form id="destination-form" onSubmit={save} noValidate className="grid gap-4">
-        <CommandNotice command={command} shownFields={FIELDS} />
-        <ChoiceTiles
-          {...register("route")}
-          legend="Route"
-          hint="Passed on: another recycler makes something of it. Disposed of: burnt or buried."
-          columns={2}
-          choices={CHOICES}
-          defaultValue={destination?.route ?? "disposed"}
-          error={errorOf("route")}
-        />
+      <ChoiceTiles
+        {...register("route")}
+        legend="Route"
+        hint="Passed on: another recycler makes something of it. Disposed of: burnt or buried."
+        columns={2}
+        choices={CHOICES}
+        defaultValue={destination?.route ?? "disposed"}
+        error={errorOf("route")}
+      />
+      <TextField
+        {...register("name")}
+        label="Receiver"
+        maxLength={80}
+        autoComplete="off"
+        error={errorOf("name")}
+      />
+      <TextField
+        {...register("receiverNumber")}
+        label="Its registration or permit number"
+        maxLength={60}
+        autoComplete="off"
+        error={errorOf("receiverNumber")}
+      />
+      <div className="grid gap-4 wide:grid-cols-2">
         <TextField
-          {...register("name")}
-          label="Receiver"
+          {...register("carrierName")}
+          label="Carrier"
           maxLength={80}
           autoComplete="off"
-          error={errorOf("name")}
+          error={errorOf("carrierName")}
         />
         <TextField
-          {...register("receiverNumber")}
-          label="Its registration or permit number"
+          {...register("carrierNumber")}
+          label="Carrier's registration"
           maxLength={60}
           autoComplete="off"
-          error={errorOf("receiverNumber")}
+          error={errorOf("carrierNumber")}
         />
-        <div className="grid gap-4 wide:grid-cols-2">
-          <TextField
-            {...register("carrierName")}
-            label="Carrier"
-            maxLength={80}
-            autoComplete="off"
-            error={errorOf("carrierName")}
-          />
-          <TextField
-            {...register("carrierNumber")}
-            label="Carrier's registration"
-            maxLength={60}
-            autoComplete="off"
-            error={errorOf("carrierNumber")}
-          />
-          <TextField
-            {...register("permitUntil", { setValueAs: (text: string | null) => text || null })}
-            type="date"
-            label="Permits good until"
-            error={errorOf("permitUntil")}
-          />
-          <TextField
-            {...register("wasteCode")}
-            label="List of Waste code"
-            hint="Such as 20 01 39, with * where hazardous."
-            mono
-            maxLength={12}
-            autoComplete="off"
-            error={errorOf("wasteCode")}
-          />
-        </div>
-        <LocalRules />
-      </form>
-    </Dialog>
+        <TextField
+          {...register("permitUntil", { setValueAs: (text: string | null) => text || null })}
+          type="date"
+          label="Permits good until"
+          error={errorOf("permitUntil")}
+        />
+        <TextField
+          {...register("wasteCode")}
+          label="List of Waste code"
+          hint="Such as 20 01 39, with * where hazardous."
+          mono
+          maxLength={12}
+          autoComplete="off"
+          error={errorOf("wasteCode")}
+        />
+      </div>
+      <LocalRules />
+    </FormDialog>
   );
 }

@@ -62,6 +62,7 @@ export function LotsToTake({ chosen, onLot, error }: Props) {
       />
       <Button
         variant="quiet"
+        className="shrink-0"
         busy={busy}
         disabled={chosen.length >= MOST_LOTS}
         onClick={() => void add()}

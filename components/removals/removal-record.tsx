@@ -1,4 +1,5 @@
 import Link from "next/link";
+import { QueryProvider } from "@/components/forms/query-provider";
 import { ButtonLink } from "@/components/ui/button-link";
 import { TONE_TEXT } from "@/components/ui/figure";
 import { PageHeader } from "@/components/ui/page-header";
@@ -8,15 +9,30 @@ import { formatKg, formatMilligrams } from "@/lib/core/mass";
 import { dayOf, formatClock, formatDay, type Day, type Instant } from "@/lib/core/time";
 import { BASIS_NAMES } from "@/lib/ledger/terms";
 import type { RemovalView } from "@/lib/removals/queries/removal-page";
+import { RecordPhotos } from "../uploads/record-photos";
 import { ReceiptTicket } from "./receipt-ticket";
 import { RemovalHistory } from "./removal-history";
 import { differenceWords, stateWords } from "./removal-words";
 import { UndoRecord } from "./undo-record";
 
-type Props = { removal: RemovalView; today: Day; timeZone: string; mayRecord: boolean };
+type Props = {
+  removal: RemovalView;
+  today: Day;
+  timeZone: string;
+  mayRecord: boolean;
+  helperId: string;
+  mayRemovePhotos: boolean;
+};
 
 /** One removal: its ticket, its receipt, and everything that happened to it. */
-export function RemovalRecord({ removal, today, timeZone, mayRecord }: Props) {
+export function RemovalRecord({
+  removal,
+  today,
+  timeZone,
+  mayRecord,
+  helperId,
+  mayRemovePhotos,
+}: Props) {
   const when = (at: Instant) => formatDay(dayOf(at, timeZone));
   const live = removal.receipts.find(({ state }) => state === "posted");
   const { words, tone } = stateWords({ ...removal, receiptNumber: live?.number ?? null });
@@ -93,15 +109,32 @@ export function RemovalRecord({ removal, today, timeZone, mayRecord }: Props) {
             </div>
           ) : null}
         </Ticket>
-        {removal.route === "passed-on" && removal.state === "posted" ? (
-          <ReceiptTicket
-            removal={removal}
-            receipt={live ?? null}
-            today={today}
-            timeZone={timeZone}
-            mayRecord={mayRecord}
-          />
-        ) : null}
+        <div className="grid min-w-0 gap-4">
+          {removal.route === "passed-on" && removal.state === "posted" ? (
+            <ReceiptTicket
+              removal={removal}
+              receipt={live ?? null}
+              today={today}
+              timeZone={timeZone}
+              mayRecord={mayRecord}
+            />
+          ) : null}
+          <QueryProvider>
+            <RecordPhotos
+              kind="removal"
+              id={removal.id}
+              label="Photos of this removal"
+              facts={{
+                what: `Taken away from ${removal.source === "reject-bin" ? "the reject bin" : "stock"}`,
+                grams: removal.grams,
+                day: dayOf(removal.occurredAt, timeZone),
+                timeZone,
+              }}
+              helperId={helperId}
+              mayRemove={mayRemovePhotos}
+            />
+          </QueryProvider>
+        </div>
       </div>
       <RemovalHistory
         removal={removal}

@@ -5,10 +5,12 @@ import { useState } from "react";
 import { CommandNotice } from "@/components/forms/command-notice";
 import { QueryProvider } from "@/components/forms/query-provider";
 import { useCommand } from "@/components/forms/use-command";
+import { ReservedQuestion } from "@/components/stock/reserved-question";
 import { ActionBar } from "@/components/ui/action-bar";
 import { Button } from "@/components/ui/button";
 import { Dialog } from "@/components/ui/dialog";
 import { EmptyState } from "@/components/ui/empty-state";
+import { Notice } from "@/components/ui/notice";
 import { formatKg } from "@/lib/core/mass";
 import { takeAwayEndpoint, type LotToTake } from "@/lib/removals/contract/removals";
 import { ScaleToday } from "../scales/scale-today";
@@ -22,20 +24,23 @@ import {
   problemsOf,
   type RemovalDraft,
 } from "./removal-draft";
+import { useRemovalDraft } from "./use-removal-draft";
 
 type Props = {
+  helperId: string;
   lists: RemovalLists;
   /** undefined: from the reject bin. null: from stock, which lot is not said yet. */
   lot: LotToTake | null | undefined;
 };
 
 /** Records what was taken away. */
-export function TakeAwayScreen({ lists, lot }: Props) {
+export function TakeAwayScreen({ helperId, lists, lot }: Props) {
   const router = useRouter();
   const save = useCommand(takeAwayEndpoint);
   const [asked, setAsked] = useState(false);
   const [asking, setAsking] = useState(false);
-  const [draft, setDraft] = useState<RemovalDraft>(() => ({
+  const [reservedToo, setReservedToo] = useState(false);
+  const [start] = useState<RemovalDraft>(() => ({
     how: "weighed",
     scaleId: lists.scales[0]?.id ?? "",
     loads: lot === undefined ? [newLoad(null)] : lot === null ? [] : [newLoad(lot)],
@@ -43,6 +48,9 @@ export function TakeAwayScreen({ lists, lot }: Props) {
     day: lists.today,
     noteNumber: "",
   }));
+  const way = lot === undefined ? "bin" : lot === null ? "stock" : "lot";
+  const form = useRemovalDraft(helperId, way, start, lists);
+  const { draft, change } = form;
   const own = problemsOf(draft, lists.tares);
   const problems = { ...(asked ? own : {}), ...formErrors(save.fieldErrors) };
   const loads = draft.loads.map((load) =>
@@ -50,22 +58,28 @@ export function TakeAwayScreen({ lists, lot }: Props) {
   );
   const total = loads.reduce<number>((sum, grams) => sum + (grams ?? 0), 0);
 
-  async function send(confirmedAbove: boolean) {
+  async function send(confirmedAbove: boolean, knowingly = reservedToo) {
     setAsked(true);
     const body = bodyOf(draft, lists.tares);
     if (!body) {
       focusFirst(own);
       return;
     }
-    const result = await save.send({ ...body, confirmedAbove });
-    setAsking(result.kind === "refused" && result.problem.code === "removal-above-book");
+    const result = await save.send(
+      { ...body, confirmedAbove, reservedToo: knowingly },
+      { requestId: form.requestId },
+    );
+    const refused = result.kind === "refused" ? result.problem.code : null;
+    setAsking(refused === "removal-above-book");
+    if (refused === "request-id-reused") form.renew();
     if (result.kind !== "done") return;
+    form.forget();
     router.push(`/removals/${result.receipt.id}`);
     router.refresh();
   }
 
   function choose(scaleId: string) {
-    setDraft({ ...draft, scaleId });
+    change({ ...draft, scaleId });
     rememberScale(scaleId);
   }
 
@@ -87,18 +101,50 @@ export function TakeAwayScreen({ lists, lot }: Props) {
           void send(false);
         }}
       >
+        {form.kept ? (
+          <Notice
+            tone="info"
+            title="Typed before, not saved"
+            live="status"
+            className="mb-4"
+            action={
+              <Button
+                variant="quiet"
+                size="small"
+                onClick={() => {
+                  form.startOver();
+                  save.reset();
+                  setAsked(false);
+                }}
+              >
+                Start over
+              </Button>
+            }
+          >
+            It was kept on this device.
+          </Notice>
+        ) : null}
         <RemovalForm
           draft={draft}
           lists={lists}
           problems={problems}
           onDraft={(next) => {
-            setDraft(next);
+            change(next);
             save.reset();
           }}
           scaleNote={<ScaleToday scaleId={draft.scaleId} onScale={choose} />}
         />
         <div className="mt-4">
-          {asking ? null : <CommandNotice command={save} shownFields={shownFields(problems)} />}
+          <ReservedQuestion
+            command={save}
+            onTake={() => {
+              setReservedToo(true);
+              void send(false, true);
+            }}
+          />
+          {asking || save.problem?.code === "lot-reserved" ? null : (
+            <CommandNotice command={save} shownFields={shownFields(problems)} />
+          )}
         </div>
         <ActionBar>
           <Button type="submit" className="grow" busy={save.pending}>

@@ -2,7 +2,7 @@
 
 import { useRouter } from "next/navigation";
 import { useEffect, useState } from "react";
-import { UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
+import { UNANSWERED_SENTENCE } from "@/components/forms/unanswered";
 import { useCommand } from "@/components/forms/use-command";
 import { Button } from "@/components/ui/button";
 import { undoReceiptEndpoint } from "@/lib/removals/contract/receipts";
@@ -42,7 +42,7 @@ export function UndoRecord({ removalId, receiptId, until }: Props) {
       )}
       {command.problem || command.unreachable ? (
         <p role="alert" className="mt-2 font-bold text-bad">
-          {command.problem?.detail ?? UNREACHABLE_SENTENCE}
+          {command.problem?.detail ?? UNANSWERED_SENTENCE}
         </p>
       ) : null}
     </div>

@@ -3,10 +3,8 @@
 import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm } from "react-hook-form";
 import * as z from "zod";
-import { CommandNotice } from "@/components/forms/command-notice";
+import { FormDialog } from "@/components/forms/form-dialog";
 import { useCommand } from "@/components/forms/use-command";
-import { Button } from "@/components/ui/button";
-import { Dialog } from "@/components/ui/dialog";
 import { TextField } from "@/components/ui/text-field";
 import { fieldSentence } from "@/lib/core/messages";
 import { lineSchema } from "@/lib/core/schemas";
@@ -41,47 +39,37 @@ export function CheckWeightDialog({ onClose, onSaved }: Props) {
     return fieldSentence(/^[a-z][a-z-]*$/.test(issue) ? issue : "empty");
   };
   return (
-    <Dialog
-      open
-      onClose={onClose}
+    <FormDialog
       title="Add a check weight"
-      actions={
-        <>
-          <Button variant="quiet" onClick={onClose}>
-            Cancel
-          </Button>
-          <Button type="submit" form="check-weight-form" busy={add.pending}>
-            Add it
-          </Button>
-        </>
-      }
+      submit="Add it"
+      onSubmit={save}
+      onClose={onClose}
+      command={add}
+      shownFields={["name", "massMilligrams", "evidence"]}
     >
-      <form id="check-weight-form" onSubmit={save} noValidate className="grid gap-4">
-        <CommandNotice command={add} shownFields={["name", "massMilligrams", "evidence"]} />
-        <TextField
-          {...register("name")}
-          label="Name"
-          hint="As helpers call it, such as Green dumbbell."
-          error={errorOf("name")}
-          maxLength={60}
-          autoComplete="off"
-        />
-        <MassInput
-          control={control}
-          name="massMilligrams"
-          label="Mass"
-          unit="kg"
-          error={errorOf("massMilligrams")}
-        />
-        <TextField
-          {...register("evidence")}
-          label="Known from"
-          hint="Number of its certificate, or on which verified scale it was weighed and when."
-          error={errorOf("evidence")}
-          maxLength={200}
-          autoComplete="off"
-        />
-      </form>
-    </Dialog>
+      <TextField
+        {...register("name")}
+        label="Name"
+        hint="As helpers call it, such as Green dumbbell."
+        error={errorOf("name")}
+        maxLength={60}
+        autoComplete="off"
+      />
+      <MassInput
+        control={control}
+        name="massMilligrams"
+        label="Mass"
+        unit="kg"
+        error={errorOf("massMilligrams")}
+      />
+      <TextField
+        {...register("evidence")}
+        label="Known from"
+        hint="Number of its certificate, or on which verified scale it was weighed and when."
+        error={errorOf("evidence")}
+        maxLength={200}
+        autoComplete="off"
+      />
+    </FormDialog>
   );
 }

@@ -2,10 +2,9 @@
 
 import { useRouter } from "next/navigation";
 import { useState } from "react";
-import { CommandNotice } from "@/components/forms/command-notice";
+import { FormDialog } from "@/components/forms/form-dialog";
 import { useCommand } from "@/components/forms/use-command";
 import { Button } from "@/components/ui/button";
-import { Dialog } from "@/components/ui/dialog";
 import { TextField } from "@/components/ui/text-field";
 import { fieldSentence } from "@/lib/core/messages";
 import { formatDay, type Day } from "@/lib/core/time";
@@ -34,49 +33,31 @@ export function ClearDialog({ scaleId, scaleName, day, label }: Props) {
         {label}
       </Button>
       {open ? (
-        <Dialog
-          open
-          onClose={() => setOpen(false)}
+        <FormDialog
           title={`Clear ${scaleName} for ${formatDay(day)}`}
-          actions={
-            <>
-              <Button variant="quiet" onClick={() => setOpen(false)}>
-                Cancel
-              </Button>
-              <Button type="submit" form="clear-form" busy={clear.pending}>
-                Clear it
-              </Button>
-            </>
-          }
+          submit="Clear it"
+          onSubmit={send}
+          onClose={() => setOpen(false)}
+          command={clear}
+          shownFields={["note", "day"]}
         >
-          <form
-            id="clear-form"
-            noValidate
-            className="grid gap-4"
-            onSubmit={(event) => {
-              event.preventDefault();
-              void send();
-            }}
-          >
-            <CommandNotice command={clear} shownFields={["note", "day"]} />
-            <p>
-              Readings of this day count as looked at. What was booked before keeps saying that the
-              scale was not checked.
-            </p>
-            <TextField
-              label="Why its readings can be believed"
-              hint="Such as: levelled it, the same crate weighs the same on both scales."
-              value={note}
-              maxLength={300}
-              onChange={(event) => setNote(event.target.value)}
-              error={
-                clear.fieldErrors.note ??
-                clear.fieldErrors.day ??
-                (asked && note.trim() === "" ? fieldSentence("empty") : undefined)
-              }
-            />
-          </form>
-        </Dialog>
+          <p>
+            Readings of this day count as looked at. What was booked before keeps saying that the
+            scale was not checked.
+          </p>
+          <TextField
+            label="Why its readings can be believed"
+            hint="Such as: levelled it, the same crate weighs the same on both scales."
+            value={note}
+            maxLength={300}
+            onChange={(event) => setNote(event.target.value)}
+            error={
+              clear.fieldErrors.note ??
+              clear.fieldErrors.day ??
+              (asked && note.trim() === "" ? fieldSentence("empty") : undefined)
+            }
+          />
+        </FormDialog>
       ) : null}
     </>
   );

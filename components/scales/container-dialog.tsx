@@ -3,11 +3,9 @@
 import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm } from "react-hook-form";
 import type * as z from "zod";
-import { CommandNotice } from "@/components/forms/command-notice";
+import { FormDialog } from "@/components/forms/form-dialog";
 import { useCommand } from "@/components/forms/use-command";
-import { Button } from "@/components/ui/button";
 import { ChoiceTiles } from "@/components/ui/choice-tiles";
-import { Dialog } from "@/components/ui/dialog";
 import { TextField } from "@/components/ui/text-field";
 import { fieldSentence } from "@/lib/core/messages";
 import {
@@ -57,50 +55,40 @@ export function ContainerDialog({ container, onClose, onSaved }: ContainerDialog
     return fieldSentence(/^[a-z][a-z-]*$/.test(issue) ? issue : "empty");
   };
   return (
-    <Dialog
-      open
-      onClose={onClose}
+    <FormDialog
       title={container ? `Change ${container.name}` : "Add a container or sack"}
-      actions={
-        <>
-          <Button variant="quiet" onClick={onClose}>
-            Cancel
-          </Button>
-          <Button type="submit" form="container-form" busy={command.pending}>
-            {container ? "Save changes" : "Add it"}
-          </Button>
-        </>
-      }
+      submit={container ? "Save changes" : "Add it"}
+      onSubmit={save}
+      onClose={onClose}
+      command={command}
+      shownFields={["name", "kind", "tareMilligrams"]}
     >
-      <form id="container-form" onSubmit={save} noValidate className="grid gap-4">
-        <CommandNotice command={command} shownFields={["name", "kind", "tareMilligrams"]} />
-        {container ? null : (
-          <ChoiceTiles
-            {...register("kind")}
-            legend="Kind"
-            hint="A container gets a label of its own: scanning it sets the tare."
-            choices={KINDS}
-            columns={2}
-            defaultValue="container"
-            error={errorOf("kind")}
-          />
-        )}
-        <TextField
-          {...register("name")}
-          label="Name"
-          hint="Such as Blue crate 1, or Rubble sack."
-          error={errorOf("name")}
-          maxLength={60}
-          autoComplete="off"
+      {container ? null : (
+        <ChoiceTiles
+          {...register("kind")}
+          legend="Kind"
+          hint="A container gets a label of its own: scanning it sets the tare."
+          choices={KINDS}
+          columns={2}
+          defaultValue="container"
+          error={errorOf("kind")}
         />
-        <MassInput
-          control={control}
-          name="tareMilligrams"
-          label="Empty weight"
-          unit="kg"
-          error={errorOf("tareMilligrams")}
-        />
-      </form>
-    </Dialog>
+      )}
+      <TextField
+        {...register("name")}
+        label="Name"
+        hint="Such as Blue crate 1, or Rubble sack."
+        error={errorOf("name")}
+        maxLength={60}
+        autoComplete="off"
+      />
+      <MassInput
+        control={control}
+        name="tareMilligrams"
+        label="Empty weight"
+        unit="kg"
+        error={errorOf("tareMilligrams")}
+      />
+    </FormDialog>
   );
 }

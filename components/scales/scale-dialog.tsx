@@ -3,10 +3,8 @@
 import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm, useWatch, type FieldErrors } from "react-hook-form";
 import type * as z from "zod";
-import { CommandNotice } from "@/components/forms/command-notice";
+import { FormDialog } from "@/components/forms/form-dialog";
 import { useCommand } from "@/components/forms/use-command";
-import { Button } from "@/components/ui/button";
-import { Dialog } from "@/components/ui/dialog";
 import { SelectField } from "@/components/ui/select-field";
 import { TextField } from "@/components/ui/text-field";
 import { fieldSentence } from "@/lib/core/messages";
@@ -83,48 +81,38 @@ export function ScaleDialog({ scale, onClose, onSaved }: ScaleDialogProps) {
     />
   );
   return (
-    <Dialog
-      open
-      onClose={onClose}
+    <FormDialog
       title={scale ? `Change ${scale.name}` : "Add a scale"}
-      actions={
-        <>
-          <Button variant="quiet" onClick={onClose}>
-            Cancel
-          </Button>
-          <Button type="submit" form="scale-form" busy={command.pending}>
-            {scale ? "Save changes" : "Add the scale"}
-          </Button>
-        </>
-      }
+      submit={scale ? "Save changes" : "Add the scale"}
+      onSubmit={save}
+      onClose={onClose}
+      command={command}
+      shownFields={FIELDS}
     >
-      <form id="scale-form" onSubmit={save} noValidate className="grid gap-4">
-        <CommandNotice command={command} shownFields={FIELDS} />
-        <TextField
-          {...register("name")}
-          label="Name"
-          hint="As helpers call it, such as Bench scale."
-          error={errorOf("name")}
-          maxLength={60}
-          autoComplete="off"
-        />
-        <SelectField
-          {...register("class")}
-          label="Class"
-          hint="On the plate of a verified scale as III or IIII in an oval."
-          options={CLASSES}
-          error={errorOf("class")}
-        />
-        <div className="grid gap-x-4 gap-y-2 wide:grid-cols-2">
-          {mass("maxMilligrams", "Max", "kg")}
-          {mass("dMilligrams", "Step of the display, d", "g")}
-          {scaleClass === "none"
-            ? mass("statedAccuracyMilligrams", "Stated accuracy, ±", "g")
-            : mass("eMilligrams", "Verification interval, e", "g")}
-        </div>
-        <ScaleFacts control={control} />
-      </form>
-    </Dialog>
+      <TextField
+        {...register("name")}
+        label="Name"
+        hint="As helpers call it, such as Bench scale."
+        error={errorOf("name")}
+        maxLength={60}
+        autoComplete="off"
+      />
+      <SelectField
+        {...register("class")}
+        label="Class"
+        hint="On the plate of a verified scale as III or IIII in an oval."
+        options={CLASSES}
+        error={errorOf("class")}
+      />
+      <div className="grid gap-x-4 gap-y-2 wide:grid-cols-2">
+        {mass("maxMilligrams", "Max", "kg")}
+        {mass("dMilligrams", "Step of the display, d", "g")}
+        {scaleClass === "none"
+          ? mass("statedAccuracyMilligrams", "Stated accuracy, ±", "g")
+          : mass("eMilligrams", "Verification interval, e", "g")}
+      </div>
+      <ScaleFacts control={control} />
+    </FormDialog>
   );
 }
 

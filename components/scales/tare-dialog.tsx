@@ -1,12 +1,10 @@
 "use client";
 
 import { useState } from "react";
-import { CommandNotice } from "@/components/forms/command-notice";
+import { FormDialog } from "@/components/forms/form-dialog";
 import { useCommand } from "@/components/forms/use-command";
 import { WeightField } from "@/components/forms/weight-field";
-import { Button } from "@/components/ui/button";
 import { DataTable } from "@/components/ui/data-table";
-import { Dialog } from "@/components/ui/dialog";
 import { SelectField } from "@/components/ui/select-field";
 import { formatMilligrams, readMass } from "@/lib/core/mass";
 import { dayOf, formatClock, formatDay } from "@/lib/core/time";
@@ -43,80 +41,66 @@ export function TareDialog({ container, tares, scales, timeZone, onClose, onSave
     if (result.kind === "done") onSaved();
   }
   return (
-    <Dialog
-      open
-      onClose={onClose}
+    <FormDialog
       title={`Weigh ${container.name} again`}
-      actions={
+      submit="Save its weight"
+      onSubmit={send}
+      onClose={onClose}
+      command={reweigh}
+      shownFields={["readingMilligrams", "scaleId"]}
+      after={
         <>
-          <Button variant="quiet" onClick={onClose}>
-            Cancel
-          </Button>
-          <Button type="submit" form="tare-form" busy={reweigh.pending}>
-            Save its weight
-          </Button>
+          <div className="mt-5">
+            <DataTable
+              caption="What it weighed"
+              showCaption
+              rows={tares}
+              rowKey={({ validFrom }) => validFrom}
+              columns={[
+                {
+                  key: "from",
+                  header: "From",
+                  head: true,
+                  cell: ({ validFrom }) =>
+                    `${formatDay(dayOf(validFrom, timeZone))}, ${formatClock(validFrom, timeZone)}`,
+                },
+                {
+                  key: "kg",
+                  header: "Empty, kg",
+                  align: "figure",
+                  cell: ({ tareMilligrams }) => formatMilligrams(tareMilligrams),
+                },
+                { key: "by", header: "By", cell: ({ byName }) => byName ?? "Not kept" },
+              ]}
+            />
+          </div>
+          {container.labelCode === null ? null : (
+            <p className="mt-3 text-sm text-soft">
+              Its printed label shows the weight of the day it was printed; scanning it takes the
+              weight of today.
+            </p>
+          )}
         </>
       }
     >
-      <form
-        id="tare-form"
-        noValidate
-        className="grid gap-4"
-        onSubmit={(event) => {
-          event.preventDefault();
-          void send();
-        }}
-      >
-        <CommandNotice command={reweigh} shownFields={["readingMilligrams", "scaleId"]} />
-        <p>
-          Empty and clean, by itself on the scale. It counts from now on; a ticket that still waits
-          on a phone keeps the weight of its own time.
-        </p>
-        <SelectField
-          label="Scale"
-          value={scaleId}
-          onChange={(event) => setScaleId(event.target.value)}
-          options={scales.map(({ id, name }) => ({ value: id, label: name }))}
-          error={reweigh.fieldErrors.scaleId}
-        />
-        <WeightField
-          label="The scale shows"
-          text={text}
-          onText={setText}
-          showProblem={asked}
-          error={reweigh.fieldErrors.readingMilligrams}
-        />
-      </form>
-      <div className="mt-5">
-        <DataTable
-          caption="What it weighed"
-          showCaption
-          rows={tares}
-          rowKey={({ validFrom }) => validFrom}
-          columns={[
-            {
-              key: "from",
-              header: "From",
-              head: true,
-              cell: ({ validFrom }) =>
-                `${formatDay(dayOf(validFrom, timeZone))}, ${formatClock(validFrom, timeZone)}`,
-            },
-            {
-              key: "kg",
-              header: "Empty, kg",
-              align: "figure",
-              cell: ({ tareMilligrams }) => formatMilligrams(tareMilligrams),
-            },
-            { key: "by", header: "By", cell: ({ byName }) => byName ?? "Not kept" },
-          ]}
-        />
-      </div>
-      {container.labelCode === null ? null : (
-        <p className="mt-3 text-sm text-soft">
-          Its printed label shows the weight of the day it was printed; scanning it takes the weight
-          of today.
-        </p>
-      )}
-    </Dialog>
+      <p>
+        Empty and clean, by itself on the scale. It counts from now on; a ticket that still waits on
+        a phone keeps the weight of its own time.
+      </p>
+      <SelectField
+        label="Scale"
+        value={scaleId}
+        onChange={(event) => setScaleId(event.target.value)}
+        options={scales.map(({ id, name }) => ({ value: id, label: name }))}
+        error={reweigh.fieldErrors.scaleId}
+      />
+      <WeightField
+        label="The scale shows"
+        text={text}
+        onText={setText}
+        showProblem={asked}
+        error={reweigh.fieldErrors.readingMilligrams}
+      />
+    </FormDialog>
   );
 }

@@ -23,7 +23,9 @@ export function GiveUpDialog({ given: { id, version }, helperId, onClose }: Prop
       const result = await giveUpDraft(id, version);
       setBusy(false);
       if (result.kind === "unreachable") {
-        setProblem("The server did not answer. The session is as it was; try again in a moment.");
+        setProblem(
+          "The server did not answer, so it is not known whether the session was given up. Try again in a moment.",
+        );
         return;
       }
       // One that is over already is what was wanted.

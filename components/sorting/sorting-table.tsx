@@ -1,7 +1,7 @@
 "use client";
 
 import { useRouter } from "next/navigation";
-import { useEffect, useRef, useState } from "react";
+import { useEffect, useState } from "react";
 import { useCommand } from "@/components/forms/use-command";
 import { ActionBar } from "@/components/ui/action-bar";
 import { Button } from "@/components/ui/button";
@@ -44,7 +44,6 @@ export function SortingTable({ id, session, helperId, timeZone, lists, reasons }
   const save = useCommand<typeof closeSortingEndpoint>(CLOSE_SORTING_ADDRESS);
   const [asking, setAsking] = useState(false);
   const [offline, setOffline] = useState(false);
-  const sentAt = useRef<{ text: string; at: number } | null>(null);
   const { state } = session;
   const { codes, draft } = state.table;
   const found = useBags(codes);
@@ -78,12 +77,11 @@ export function SortingTable({ id, session, helperId, timeZone, lists, reasons }
       window.scrollTo({ top: 0 });
       return;
     }
-    const input = { codes: [...codes], scaleId: scale.id, ...body, ...answer };
-    // Sent again after a lost answer it must be the same request, to the millisecond.
-    const text = JSON.stringify(input);
-    if (sentAt.current?.text !== text) sentAt.current = { text, at: Date.now() };
-    const occurredAt = instant(sentAt.current.at);
-    const result = await save.send({ ...input, occurredAt }, { requestId: id });
+    const occurredAt = instant(Date.now());
+    const result = await save.send(
+      { codes: [...codes], scaleId: scale.id, ...body, ...answer, occurredAt },
+      { requestId: id, pressedAt: "occurredAt" },
+    );
     setAsking(false);
     if (result.kind === "refused") session.hearRefusal(result.problem);
     setOffline(result.kind === "unreachable");
@@ -136,9 +134,9 @@ export function SortingTable({ id, session, helperId, timeZone, lists, reasons }
             onGoOn={goOn}
           />
           {offline ? (
-            <Notice tone="warn" title="Not saved: the server did not answer" live="alert">
-              Saving needs the network. Everything is kept on this phone; try again when there is
-              signal.
+            <Notice tone="warn" title="The server did not answer" live="alert">
+              Saving needs the network. Everything is kept on this phone; press again when there is
+              signal. Should it have arrived, it is not counted twice.
             </Notice>
           ) : save.problem && !over && !state.refused ? (
             <Notice tone="bad" title="Nothing was saved" live="alert">

@@ -2,7 +2,7 @@
 
 import { useRouter } from "next/navigation";
 import { useEffect, useState } from "react";
-import { UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
+import { UNANSWERED_SENTENCE } from "@/components/forms/unanswered";
 import { useCommand } from "@/components/forms/use-command";
 import { Button } from "@/components/ui/button";
 import { Notice } from "@/components/ui/notice";
@@ -34,8 +34,13 @@ export function UndoSorting({ id, until }: Props) {
         </Button>
       )}
       {undo.problem || undo.unreachable ? (
-        <Notice tone="bad" title="It was not undone" live="alert" className="basis-full">
-          {undo.problem?.detail ?? UNREACHABLE_SENTENCE}
+        <Notice
+          tone="bad"
+          title={undo.unreachable ? "No answer" : "It was not undone"}
+          live="alert"
+          className="basis-full"
+        >
+          {undo.problem?.detail ?? UNANSWERED_SENTENCE}
         </Notice>
       ) : null}
     </>

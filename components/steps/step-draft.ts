@@ -1,4 +1,5 @@
 /** A step as typed: what goes in, what came out, what was lost; and what it comes to. Plain data. */
+import { readDraft, writeDraft } from "@/components/forms/kept-draft";
 import { newId } from "@/lib/core/ids";
 import { gramsFromMilligrams, readMass } from "@/lib/core/mass";
 import type { Kind } from "@/lib/core/plastics";
@@ -236,27 +237,15 @@ export function contentOf(
   };
 }
 
-/** Under an opaque id of the helper, so that one person on a shared phone never sees another's. */
-const keyOf = (helperId: string): string => `bismar-draft:step:${helperId}`;
+const KEPT_AS = "step";
 
 export function readStepDraft(helperId: string): StepDraft | null {
-  try {
-    const stored: unknown = JSON.parse(localStorage.getItem(keyOf(helperId)) ?? "null");
-    const looksRight =
-      typeof stored === "object" && stored !== null && "inputs" in stored && "outputs" in stored;
-    return looksRight ? { ...EMPTY_STEP, ...(stored as Partial<StepDraft>) } : null;
-  } catch {
-    // No storage, or a text that another version wrote: there is simply no draft.
-    return null;
-  }
+  const kept = readDraft(KEPT_AS, helperId);
+  const looksRight = kept !== null && "inputs" in kept && "outputs" in kept;
+  return looksRight ? { ...EMPTY_STEP, ...(kept as Partial<StepDraft>) } : null;
 }
 
 /** Keeps the draft on this device; null forgets it. */
 export function writeStepDraft(helperId: string, draft: StepDraft | null): void {
-  try {
-    if (draft) localStorage.setItem(keyOf(helperId), JSON.stringify(draft));
-    else localStorage.removeItem(keyOf(helperId));
-  } catch {
-    // A full or forbidden storage must not stop the work; what is typed stays on the screen.
-  }
+  writeDraft(KEPT_AS, helperId, draft);
 }

@@ -1,4 +1,5 @@
 import Link from "next/link";
+import { QueryProvider } from "@/components/forms/query-provider";
 import { ButtonLink } from "@/components/ui/button-link";
 import { Figure } from "@/components/ui/figure";
 import { Notice } from "@/components/ui/notice";
@@ -15,9 +16,16 @@ import { pileDetail, pileName } from "@/lib/stock/rules/material-words";
 import { STEP_KIND_NAMES } from "@/lib/stock/terms";
 import { PATTERNS } from "../stock/patterns";
 import { UndoRecord } from "../stock/undo-record";
+import { RecordPhotos } from "../uploads/record-photos";
 import { TakeBackStep } from "./take-back-step";
 
-type Props = { step: StepView; timeZone: string; mayCorrect: boolean };
+type Props = {
+  step: StepView;
+  timeZone: string;
+  mayCorrect: boolean;
+  helperId: string;
+  mayRemovePhotos: boolean;
+};
 type Row = StepView["inputs"][number] | StepView["outputs"][number];
 
 function Rows({ title, rows }: { title: string; rows: readonly Row[] }) {
@@ -53,7 +61,7 @@ function Rows({ title, rows }: { title: string; rows: readonly Row[] }) {
 }
 
 /** One step with what went in, what came out and what was lost. */
-export function StepPage({ step, timeZone, mayCorrect }: Props) {
+export function StepPage({ step, timeZone, mayCorrect, helperId, mayRemovePhotos }: Props) {
   const day = (at: number) => formatDay(dayOf(instant(at), timeZone));
   const rest = step.inputGrams - step.outputGrams - step.lossGrams;
   return (
@@ -124,6 +132,23 @@ export function StepPage({ step, timeZone, mayCorrect }: Props) {
           </dd>
         </div>
       </dl>
+      <div className="mt-6 max-w-xl">
+        <QueryProvider>
+          <RecordPhotos
+            kind="step"
+            id={step.stepId}
+            label="Photos of this step"
+            facts={{
+              what: `${STEP_KIND_NAMES[step.kind]} ${POLYMER_NAMES[step.polymer].name}`,
+              grams: step.outputGrams,
+              day: dayOf(instant(step.occurredAt), timeZone),
+              timeZone,
+            }}
+            helperId={helperId}
+            mayRemove={mayRemovePhotos}
+          />
+        </QueryProvider>
+      </div>
       <div className="mt-6 flex flex-wrap items-center gap-2.5 max-wide:*:grow">
         {mayCorrect ? <ButtonLink href="/steps/new">Next step</ButtonLink> : null}
         {step.undoUntil === null ? null : (

@@ -16,6 +16,7 @@ import { LaterUses } from "../ledger/later-uses";
 import type { LaterUses as Later } from "@/lib/core/schemas";
 import { ReasonField } from "../stock/reason-field";
 import { RefusalNotice } from "../stock/refusal-notice";
+import { ReservedQuestion } from "../stock/reserved-question";
 import { useBinDesk } from "../stock/use-bin-desk";
 import {
   contentOf,
@@ -70,6 +71,7 @@ export function StepWizard({ helperId, from, correcting, timeZone }: Props) {
   const command = correcting ? correct : save;
   const [stage, setStage] = useState<Stage>("in");
   const [asked, setAsked] = useState(false);
+  const [reservedToo, setReservedToo] = useState(false);
   const [reason, setReason] = useState("");
   const [corrected, setCorrected] = useState<Corrected | null>(null);
   const [typed, setTyped] = useState<StepDraft | null>(correcting?.draft ?? null);
@@ -131,7 +133,7 @@ export function StepWizard({ helperId, from, correcting, timeZone }: Props) {
     window.scrollTo(0, 0);
   }
 
-  async function send() {
+  async function send(knowingly = reservedToo) {
     setAsked(true);
     const open = sums.verdict.kind === "needs-cause" || sums.verdict.kind === "needs-check";
     if (!content || open || (correcting && reason.trim().length < 3)) return;
@@ -150,7 +152,10 @@ export function StepWizard({ helperId, from, correcting, timeZone }: Props) {
       } else if (result.kind === "refused") setStage(stageOf(result.problem));
       return;
     }
-    const result = await save.send({ ...content, occurredAt: Date.now() });
+    const result = await save.send(
+      { ...content, occurredAt: Date.now(), reservedToo: knowingly },
+      { pressedAt: "occurredAt" },
+    );
     if (result.kind === "done") {
       writeStepDraft(helperId, null);
       router.push(`/steps/${result.receipt.stepId}`);
@@ -182,7 +187,14 @@ export function StepWizard({ helperId, from, correcting, timeZone }: Props) {
             asked={asked}
           />
         ) : null}
-        <RefusalNotice command={command} except={["lot-holds-less"]} />
+        <ReservedQuestion
+          command={command}
+          onTake={() => {
+            setReservedToo(true);
+            void send(true);
+          }}
+        />
+        <RefusalNotice command={command} except={["lot-holds-less", "lot-reserved"]} />
       </div>
       <ActionBar>
         {at > 0 ? (

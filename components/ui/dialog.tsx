@@ -1,6 +1,6 @@
 "use client";
 
-import { useEffect, useId, useRef, type ReactNode } from "react";
+import { useEffect, useId, useLayoutEffect, useRef, type ReactNode } from "react";
 import { Icon } from "./icon";
 
 type DialogProps = {
@@ -30,6 +30,12 @@ export function Dialog({ open, onClose, title, children, actions, role }: Dialog
     if (!open && element.open) element.close();
   }, [open]);
 
+  // A dialog that is taken off the page while open would leave the focus nowhere: it closes first.
+  useLayoutEffect(() => {
+    const element = box.current;
+    return () => element?.close();
+  }, []);
+
   return (
     <dialog
       ref={box}
@@ -43,7 +49,7 @@ export function Dialog({ open, onClose, title, children, actions, role }: Dialog
       }}
       onClose={(event) => {
         // A form with method=dialog, or a browser that closes on its own: keep the parent's state true.
-        if (event.target === box.current && open) onClose();
+        if (event.target === box.current && open && !box.current.open) onClose();
       }}
       className="m-auto mb-0 max-h-[92dvh] w-full max-w-none overflow-y-auto rounded-t-ticket border border-rule bg-card text-ink backdrop:bg-veil open:flex open:flex-col open:motion-safe:animate-rise wide:mb-auto wide:max-w-xl wide:rounded-ticket"
     >

@@ -52,16 +52,17 @@ export function PhotoCapture({ started, onStarted, label, heading, more, ...inta
     return () => clearTimeout(timer);
   }, [wanted]);
 
-  const mayAdd = intake.helperId !== null;
+  const { helperId } = intake;
   const add = (files: File[], purpose: PhotoPurpose = "view") => {
+    if (helperId === null) return;
     onStarted?.();
-    setBatch({ files, purpose });
+    setBatch({ files, purpose, helperId });
   };
   const drag = (event: DragEvent) => {
     event.preventDefault();
-    setOver(mayAdd && event.type === "dragover");
+    setOver(helperId !== null && event.type === "dragover");
     const files = [...event.dataTransfer.files];
-    if (mayAdd && event.type === "drop" && files.length > 0) add(files);
+    if (event.type === "drop" && files.length > 0) add(files);
   };
   return (
     <section
@@ -72,7 +73,7 @@ export function PhotoCapture({ started, onStarted, label, heading, more, ...inta
       className={over ? "rounded-control outline-3 outline-offset-4 outline-act" : ""}
     >
       {heading}
-      <PhotoButtons take="Take photo" of={label} disabled={!mayAdd} onFiles={add} />
+      <PhotoButtons take="Take photo" of={label} disabled={helperId === null} onFiles={add} />
       {more?.(add)}
       {part ? createElement(part, { ...intake, batch }) : null}
       {failed && !part ? (

@@ -12,7 +12,12 @@ import { PhotoTray } from "./photo-tray";
 import { usePaste } from "./use-paste";
 
 /** Files chosen at once. */
-export type PhotoBatch = { files: readonly File[]; purpose: PhotoPurpose };
+export type PhotoBatch = {
+  files: readonly File[];
+  purpose: PhotoPurpose;
+  /** In whose session they were chosen: another helper may have signed in before they are read. */
+  helperId: string;
+};
 
 export type IntakeProps = {
   subject: PhotoSubjectRef;
@@ -44,8 +49,7 @@ export function PhotoIntake({
   const taken = useRef<PhotoBatch | null>(null);
 
   const add = useCallback(
-    async ({ files, purpose }: PhotoBatch) => {
-      if (helperId === null) return;
+    async ({ files, purpose, helperId }: PhotoBatch) => {
       setSaid(null);
       setReading((count) => count + files.length);
       try {
@@ -60,7 +64,7 @@ export function PhotoIntake({
         setReading((count) => count - files.length);
       }
     },
-    [helperId, onMiddle, queries, subject],
+    [onMiddle, queries, subject],
   );
   useEffect(() => {
     if (batch === null || taken.current === batch) return;
@@ -68,7 +72,12 @@ export function PhotoIntake({
     void add(batch);
   }, [add, batch]);
   usePaste(
-    useCallback((files: File[]) => void add({ files, purpose: "view" }), [add]),
+    useCallback(
+      (files: File[]) => {
+        if (helperId !== null) void add({ files, purpose: "view", helperId });
+      },
+      [add, helperId],
+    ),
     paste && helperId !== null,
   );
 

@@ -1,7 +1,7 @@
 "use client";
 
 import { useEffect, useRef } from "react";
-import { UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
+import { UNANSWERED_SENTENCE } from "@/components/forms/unanswered";
 import { useCommand } from "@/components/forms/use-command";
 import { Button } from "@/components/ui/button";
 import type { Photo, removePhotoEndpoint } from "@/lib/uploads/contract";
@@ -23,7 +23,7 @@ export function RemovePhoto({ photo, onKeep, onRemoved }: Props) {
     if (result.kind === "done" || gone) onRemoved();
   };
   const said =
-    remove.problem?.detail ?? (remove.unreachable ? UNREACHABLE_SENTENCE : "Remove it for good?");
+    remove.problem?.detail ?? (remove.unreachable ? UNANSWERED_SENTENCE : "Remove it for good?");
   return (
     <div
       ref={box}

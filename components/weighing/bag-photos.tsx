@@ -40,6 +40,7 @@ export function BagPhotos({ form, netGrams, zone, helperId, onColour }: Props) {
         timeZone: zone,
       }}
       started={photos}
+      mayRemove
       onStarted={useCallback(() => set({ photos: true }), [set])}
       onMiddle={useCallback((middle: Lab | null) => onColour({ id, middle }), [onColour, id])}
     />

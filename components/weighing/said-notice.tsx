@@ -1,6 +1,7 @@
 "use client";
 
 import Link from "next/link";
+import { UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
 import { Notice } from "@/components/ui/notice";
 import { formatCode } from "@/lib/core/bag-code";
 import { formatKg, formatMilligrams } from "@/lib/core/mass";
@@ -24,7 +25,7 @@ export function SaidNotice({ said, zone }: { said: Said | null; zone: string }) 
     return (
       <Notice
         tone="bad"
-        title="Not saved"
+        title={said.sentence === UNREACHABLE_SENTENCE ? "No answer" : "Not saved"}
         live="alert"
         className="mb-3"
         action={

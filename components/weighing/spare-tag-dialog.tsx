@@ -1,7 +1,8 @@
 "use client";
 
 import { useState } from "react";
-import { fieldErrorsOf, UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
+import { fieldErrorsOf } from "@/components/forms/problem-document";
+import { UNANSWERED_SENTENCE } from "@/components/forms/unanswered";
 import { useCommand } from "@/components/forms/use-command";
 import { Button } from "@/components/ui/button";
 import { ChoiceTiles } from "@/components/ui/choice-tiles";
@@ -48,7 +49,7 @@ export function SpareTagDialog({ points, onClose, onTag }: Props) {
       setWrong(
         result.kind === "refused"
           ? (fieldErrorsOf(result.problem).code ?? result.problem.detail)
-          : UNREACHABLE_SENTENCE,
+          : UNANSWERED_SENTENCE,
       );
     }
   };
@@ -83,7 +84,11 @@ export function SpareTagDialog({ points, onClose, onTag }: Props) {
           spellCheck={false}
         />
         {wrong ? (
-          <Notice tone="bad" title="Not done" live="alert">
+          <Notice
+            tone="bad"
+            title={wrong === UNANSWERED_SENTENCE ? "No answer" : "Not done"}
+            live="alert"
+          >
             {wrong}
           </Notice>
         ) : null}

@@ -7,13 +7,13 @@ import { Ticket } from "@/components/ui/ticket";
 import { WeightDisplay } from "@/components/ui/weight-display";
 import { formatCode } from "@/lib/core/bag-code";
 import { formatKg } from "@/lib/core/mass";
-import { instant } from "@/lib/core/time";
+import { dayOf, instant } from "@/lib/core/time";
 import type { WeighInPage } from "@/lib/weighing/contract/corrections";
 import { whenWords } from "@/lib/weighing/rules";
 import { LaterUsesList } from "../ledger/later-uses-list";
+import { RecordPhotos } from "../uploads/record-photos";
 import { WeighInFacts } from "./weigh-in-facts";
 import { WeighInFate } from "./weigh-in-fate";
-import { WeighInPhotos } from "./weigh-in-photos";
 
 type Props = {
   weighIn: WeighInPage;
@@ -79,13 +79,17 @@ export function WeighInRecord({ weighIn, timeZone, helperId, mayCorrect, mayRemo
               <LaterUsesList later={later} timeZone={timeZone} />
             </Notice>
           ) : null}
-          <WeighInPhotos
+          <RecordPhotos
+            kind="weigh-in"
             id={id}
+            label="Photos of this weigh-in"
+            facts={{
+              what: `Bag ${formatCode(code)}`,
+              grams: netGrams,
+              day: dayOf(instant(occurredAt), timeZone),
+              timeZone,
+            }}
             helperId={helperId}
-            timeZone={timeZone}
-            code={code}
-            netGrams={netGrams}
-            occurredAt={instant(occurredAt)}
             mayRemove={mayRemovePhotos}
           />
         </div>

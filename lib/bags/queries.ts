@@ -43,6 +43,17 @@ export function getBagById(db: Readable, bagId: BagId): Bag | null {
   return (row as Bag | undefined) ?? null;
 }
 
+/** Every code that opens a bag, its first one first. */
+export function listCodesOfBag(db: Readable, bag: Pick<Bag, "id" | "code">): LabelCode[] {
+  return prepared(
+    db.client,
+    `select code from labels where kind = 'bag' and subject = ?
+      order by code <> ?, made_at, code`,
+  )
+    .pluck()
+    .all(bag.id, bag.code) as LabelCode[];
+}
+
 /** What a scanned label stands for: a bag, lot, container, run or batch. */
 export function getLabel(
   db: Readable,

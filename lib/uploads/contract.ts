@@ -63,8 +63,9 @@ export const photoFileEndpoint = endpoint({
 export const removePhotoEndpoint = endpoint({
   method: "DELETE",
   path: "/api/photos/{id}",
-  summary: "Removes a photo; who did it stays in the audit.",
-  permission: "photos.remove",
+  summary:
+    "Removes a photo; who did it stays in the audit. Whoever may not remove others' takes back their own, until what it shows is saved.",
+  permission: "photos.add",
   input: z.object({ requestId: requestIdSchema, id: idSchema<"photo">() }),
   output: z.object({ id: z.string() }),
 });

@@ -42,7 +42,7 @@ export const emptyFile: PickedFile = {
 };
 
 /** The photos of "this bag", "this lot". */
-export function photosOf(page: Page, what: "bag" | "lot") {
+export function photosOf(page: Page, what: "bag" | "lot" | "removal") {
   const part = page.getByRole("region", { name: `Photos of this ${what}` });
   const shown: Locator = part.locator("ul img[src^='/api/photos/']");
   return {

@@ -11,7 +11,14 @@ import { storage, type Storage } from "@/lib/platform/storage";
 import type { removePhotoEndpoint } from "../contract";
 import { subjectExistsSql } from "../queries/subjects";
 
-type Found = { subjectKind: string; subjectId: string; purpose: string; ownerId: string };
+type Found = {
+  subjectKind: string;
+  subjectId: string;
+  purpose: string;
+  ownerId: string;
+  /** Its record is saved. */
+  saved: 0 | 1;
+};
 
 /** The keys of a photo's files. */
 export type PhotoKeys = { id: string; large: string; thumb: string };
@@ -38,23 +45,28 @@ export async function deleteFiles(
 }
 
 /**
+ * One's own photo of a record that is not saved yet goes as it came; that of a saved one is part of the record.
+ *
  * @throws AppError `not-found` for a photo that is not there or was removed before, and for that of a record
- *   which is not saved yet, unless it is one's own
+ *   which is not saved yet, unless it is one's own; `forbidden` for that of a saved record without "photos.remove"
  */
 export async function removePhoto(
   ctx: Context,
   input: z.output<typeof removePhotoEndpoint.input>,
   from: Storage = storage(),
 ): Promise<z.output<typeof removePhotoEndpoint.output>> {
-  allow(ctx, "photos.remove");
+  allow(ctx, "photos.add");
   const receipt = once<{ id: string }>(ctx, "DELETE /api/photos/{id}", input.requestId, (tx) => {
     const found = prepared(
       tx.client,
-      `select p.subject_kind as subjectKind, p.subject_id as subjectId, p.purpose, p.owner_id as ownerId
-       from photos p
-       where p.id = ? and p.removed_at is null and (p.owner_id = ? or ${subjectExistsSql("p")})`,
+      `select * from (
+         select p.subject_kind as subjectKind, p.subject_id as subjectId, p.purpose, p.owner_id as ownerId,
+                ${subjectExistsSql("p")} as saved
+         from photos p where p.id = ? and p.removed_at is null)
+       where saved or ownerId = ?`,
     ).get(input.id, ctx.actor.kind === "person" ? ctx.actor.id : null) as Found | undefined;
     if (!found) throw new AppError("not-found");
+    if (found.saved) allow(ctx, "photos.remove");
     const { subjectKind, subjectId, purpose, ownerId } = found;
     prepared(tx.client, "update photos set removed_at = ?, removed_by = ? where id = ?").run(
       ctx.now,

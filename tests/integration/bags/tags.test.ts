@@ -9,6 +9,7 @@ import {
   getPublicLabel,
   getTagOrderSheet,
   listBagsOfOrder,
+  listCodesOfBag,
   listTagOrders,
   ORDERS_PER_PAGE,
 } from "@/lib/bags/queries";
@@ -140,6 +141,9 @@ describe("replaceTag", () => {
       const old = getBagByCode(scheme.db.reader, input.code);
       expect(old).not.toBeNull();
       expect(getBagByCode(scheme.db.reader, input.newCode)).toEqual(old);
+      if (old) {
+        expect(listCodesOfBag(scheme.db.reader, old)).toEqual([input.code, input.newCode]);
+      }
       expect(answer).toMatchObject({
         newCode: input.newCode,
         bag: { code: input.code, id: old?.id },

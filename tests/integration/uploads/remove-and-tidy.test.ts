@@ -82,7 +82,36 @@ describe("removing a photo", () => {
     expect((await remove(id, newId())).status).toBe(404);
   });
 
-  it("is for leads and coordinators", async () => {
+  it("of what is not saved yet is for whoever took it, and for nobody else", async () => {
+    const input = desk.input();
+    await desk.upload(input, picture);
+    const id = input.photoId;
+    const before = audit().length;
+    for (const role of ["lead", "coordinator"] as const) {
+      expect((await remove(id, newId(), role)).status).toBe(404);
+    }
+    const answer = await remove(id, newId(), "volunteer");
+    expect([answer.status, await answer.json()]).toEqual([200, { id }]);
+    expect(stored(id)?.removed_by).toBe(desk.people.volunteer);
+    expect(desk.namesIn("files")).toEqual([]);
+    expect(audit().slice(before)).toEqual([
+      {
+        action: "photos.remove",
+        actor: desk.people.volunteer,
+        fields: JSON.stringify({ photoId: id, purpose: "view", ownerId: desk.people.volunteer }),
+      },
+    ]);
+  });
+
+  it("of another person, of what is not saved yet, is not found for a volunteer", async () => {
+    const input = desk.input();
+    await desk.upload(input, picture, "lead");
+    expect((await remove(input.photoId, newId(), "volunteer")).status).toBe(404);
+    expect(stored(input.photoId)?.removed_at).toBeNull();
+    expect((await remove(input.photoId, newId(), "lead")).status).toBe(200);
+  });
+
+  it("of a saved record is for leads and coordinators", async () => {
     const id = await added();
     expect((await remove(id, newId(), "volunteer")).status).toBe(403);
     expect(await statusOf(id)).toBe(200);

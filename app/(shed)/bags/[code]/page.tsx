@@ -1,7 +1,7 @@
 import type { Metadata } from "next";
 import { notFound } from "next/navigation";
 import { ShedBag } from "@/components/bags/shed-bag";
-import { getBagByCode } from "@/lib/bags/queries";
+import { getBagByCode, listCodesOfBag } from "@/lib/bags/queries";
 import { formatCode, readCode } from "@/lib/core/bag-code";
 import { pageContext } from "@/lib/http/page-context";
 import { may, requirePerson } from "@/lib/platform/context";
@@ -24,6 +24,8 @@ export default async function BagPage({ params }: Props) {
   return (
     <ShedBag
       bag={bag}
+      codes={listCodesOfBag(ctx.db.reader, bag)}
+      mayTag={may(ctx, "bags.tag")}
       weighIns={listWeighInsOfBag(ctx, bag.id)}
       sorted={getBagToSort(ctx, { code: bag.code }).sorted}
       timeZone={requireScheme(ctx.db.reader).timeZone}

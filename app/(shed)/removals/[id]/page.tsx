@@ -3,7 +3,7 @@ import { notFound } from "next/navigation";
 import { RemovalRecord } from "@/components/removals/removal-record";
 import { dayOf } from "@/lib/core/time";
 import { pageContext } from "@/lib/http/page-context";
-import { may } from "@/lib/platform/context";
+import { may, requirePerson } from "@/lib/platform/context";
 import { requireScheme } from "@/lib/platform/scheme";
 import { getRemoval } from "@/lib/removals/queries/removal-page";
 
@@ -20,6 +20,8 @@ export default async function RemovalPage({ params }: PageProps<"/removals/[id]"
       today={dayOf(ctx.now, timeZone)}
       timeZone={timeZone}
       mayRecord={may(ctx, "removals.record")}
+      helperId={requirePerson(ctx)}
+      mayRemovePhotos={may(ctx, "photos.remove")}
     />
   );
 }

@@ -2,6 +2,7 @@ import type { Metadata } from "next";
 import { TakeAwayScreen } from "@/components/removals/take-away-screen";
 import { PageHeader } from "@/components/ui/page-header";
 import { pageContext } from "@/lib/http/page-context";
+import { requirePerson } from "@/lib/platform/context";
 import { findLotToTake } from "@/lib/removals/queries/lot-to-take";
 import { getRemovalLists } from "@/lib/removals/queries/removal-lists";
 
@@ -19,6 +20,7 @@ export default async function TakeAwayPage({ searchParams }: PageProps<"/removal
         back={{ href: "/removals", label: "Back to what was taken away" }}
       />
       <TakeAwayScreen
+        helperId={requirePerson(ctx)}
         lists={getRemovalLists(ctx)}
         lot={from === "stock" || found ? found : undefined}
       />

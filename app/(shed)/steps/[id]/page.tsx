@@ -2,7 +2,7 @@ import type { Metadata } from "next";
 import { notFound } from "next/navigation";
 import { StepPage } from "@/components/steps/step-page";
 import { pageContext } from "@/lib/http/page-context";
-import { may } from "@/lib/platform/context";
+import { may, requirePerson } from "@/lib/platform/context";
 import { requireScheme } from "@/lib/platform/scheme";
 import { undoStepEndpoint } from "@/lib/stock/contract/steps";
 import { getStep } from "@/lib/stock/queries/steps";
@@ -21,6 +21,8 @@ export default async function StepRoute({ params }: Props) {
       step={step}
       timeZone={requireScheme(ctx.db.reader).timeZone}
       mayCorrect={may(ctx, "steps.record")}
+      helperId={requirePerson(ctx)}
+      mayRemovePhotos={may(ctx, "photos.remove")}
     />
   );
 }

@@ -11,7 +11,7 @@ export default defineConfig({
   forbidOnly: Boolean(process.env.CI),
   timeout: 180_000,
   expect: { timeout: 10_000 },
-  globalTimeout: 20 * 60_000,
+  globalTimeout: 25 * 60_000,
   reporter: [
     ["list"],
     ["json", { outputFile: process.env.PLAYWRIGHT_JSON_OUTPUT_FILE ?? ".cache/logs/e2e.json" }],

@@ -5,17 +5,17 @@ import { formatKg } from "@/lib/core/mass";
 import { dayOf, formatDay, instant } from "@/lib/core/time";
 import type { LotBag } from "@/lib/stock/queries/lots";
 
-type Props = { bags: readonly LotBag[]; count: number; timeZone: string };
+type Props = { bags: readonly LotBag[]; more: boolean; timeZone: string };
 
-/** The bags whose piles went into a lot, newest first. */
-export function LotBags({ bags, count, timeZone }: Props) {
-  if (count === 0) return null;
+/** The bags that went into a lot, newest first. */
+export function LotBags({ bags, more, timeZone }: Props) {
+  if (bags.length === 0) return null;
   return (
     <section className="mt-8" aria-label="Bags that went in">
       <h2 className="mb-2 text-lg">Bags that went in</h2>
-      {count > bags.length ? (
+      {more ? (
         <p className="mb-2 text-sm text-soft">
-          The last {bags.length} of {count}.
+          The last {bags.length}; every one stands among the movements below.
         </p>
       ) : null}
       <DataTable
@@ -39,7 +39,7 @@ export function LotBags({ bags, count, timeZone }: Props) {
           { key: "point", header: "Drop-off point", cell: (bag) => bag.pointName ?? "Not known" },
           {
             key: "sorted",
-            header: "Sorted",
+            header: "Went in",
             cell: (bag) => formatDay(dayOf(instant(bag.sortedAt), timeZone)),
           },
           { key: "kg", header: "kg", align: "figure", cell: (bag) => formatKg(bag.grams) },

@@ -31,7 +31,14 @@ type Props = {
   /** Whole days since it was opened. */
   ageDays: number;
   mayEdit: boolean;
-  may: { count: boolean; identify: boolean; move: boolean; step: boolean; correct: boolean };
+  may: {
+    count: boolean;
+    identify: boolean;
+    move: boolean;
+    step: boolean;
+    remove: boolean;
+    correct: boolean;
+  };
   /** Whose session this is: photos that wait on a phone are sent in it only. */
   helperId: string;
   mayRemovePhotos: boolean;
@@ -137,7 +144,7 @@ export function LotPage({
         timeZone={timeZone}
         mayCorrect={may.correct}
       />
-      <LotBags bags={lot.bags} count={lot.bagCount} timeZone={timeZone} />
+      <LotBags bags={lot.bags} more={lot.moreBags} timeZone={timeZone} />
       <LotMovements number={lot.number} page={movements} timeZone={timeZone} />
     </>
   );

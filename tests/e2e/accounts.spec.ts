@@ -1,6 +1,6 @@
 /** Invited, joined, forgotten, removed: the life of an account, on a phone, with the mails of the local folder. */
-import { AxeBuilder } from "@axe-core/playwright";
 import { expect, test, type Browser, type Page } from "@playwright/test";
+import { expectAccessible } from "../support/accessible";
 import { startE2eServer, type E2eServer } from "../support/e2e-server";
 
 const EMAIL = "brent@saltmarsh.example";
@@ -32,11 +32,6 @@ async function mailedLink(page: Page, mails: number): Promise<string> {
   }).toPass();
   const link = page.getByRole("listitem").first().getByRole("link");
   return (await link.getAttribute("href")) ?? "";
-}
-
-async function expectAccessible(page: Page): Promise<void> {
-  const { violations } = await new AxeBuilder({ page }).analyze();
-  expect(violations.map(({ id, nodes }) => `${id}: ${nodes[0]?.html}`)).toEqual([]);
 }
 
 async function signInBy(page: Page, password: string): Promise<void> {

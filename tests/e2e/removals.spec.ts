@@ -1,22 +1,19 @@
 /** What leaves the shed, on the built program at 360 px: a removal, its question, its receipt and its correction. */
-import AxeBuilder from "@axe-core/playwright";
 import { expect, test, type Page } from "@playwright/test";
 import { newId } from "@/lib/core/ids";
+import { expectAccessible } from "../support/accessible";
 import { startE2eServer, type E2eServer } from "../support/e2e-server";
+import { phonePicture, photosOf } from "../support/photo-page";
 
 let server: E2eServer;
 
 test.beforeAll(async () => {
   server = await startE2eServer("shed");
+  await server.storage.start();
 });
 test.afterAll(async () => {
   await server.close();
 });
-
-async function expectAccessible(page: Page): Promise<void> {
-  const { violations } = await new AxeBuilder({ page }).analyze();
-  expect(violations.map(({ id, nodes }) => `${id}: ${nodes[0]?.html}`)).toEqual([]);
-}
 
 const post = (page: Page, path: string, data: Record<string, unknown>) =>
   page.request.post(`${server.url}${path}`, {
@@ -93,6 +90,9 @@ test("takes rejects away, asks about too much, proves it by a receipt and correc
   await page.getByRole("link", { name: "Take rejects away" }).click();
   await page.getByLabel("The scale shows").fill("5");
   await page.getByLabel("Note or ticket number").fill("TN 118");
+  await page.reload();
+  await expect(page.getByText("Typed before, not saved")).toBeVisible();
+  await expect(page.getByLabel("Note or ticket number")).toHaveValue("TN 118");
   await expectAccessible(page);
   await page.getByRole("button", { name: "Take away 5.000 kg" }).click();
   const asked = page.getByRole("alertdialog");
@@ -114,6 +114,10 @@ test("takes rejects away, asks about too much, proves it by a receipt and correc
     { account: "passed-on", cause: "unproven", grams: 3900 },
     { account: "difference", cause: null, grams: 100 },
   ]);
+
+  const photos = photosOf(page, "removal");
+  await photos.choose(await phonePicture("ticket.jpg", "#1f46d6"));
+  await expect(photos.shown).toHaveAttribute("alt", /^Taken away from the reject bin, 3\.900 kg, /);
 
   await page.getByLabel("Number of the receipt").fill("QR 7");
   await page.getByLabel("Weight received").fill("3.88");
@@ -137,6 +141,10 @@ test("takes rejects away, asks about too much, proves it by a receipt and correc
       "select sum(passed_proven) as proven, sum(passed_unproven) as unproven, sum(difference) as difference from totals_month",
     ),
   ).toEqual([{ proven: 3800, unproven: 0, difference: 200 }]);
+  // What was typed is kept only until it is saved.
+  expect(await page.evaluate(() => Object.keys(localStorage))).not.toContainEqual(
+    expect.stringContaining("removal-bin"),
+  );
   await page.getByRole("link", { name: "another one" }).click();
   await expect(page.getByText("Read the wrong line")).toBeVisible();
 });

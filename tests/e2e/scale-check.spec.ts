@@ -1,7 +1,7 @@
 /** A scale's day on the built program: not checked, failed twice, the other scale first, and a lead's word. */
-import AxeBuilder from "@axe-core/playwright";
-import { expect, test, type Page } from "@playwright/test";
+import { expect, test } from "@playwright/test";
 import { newId } from "@/lib/core/ids";
+import { expectAccessible } from "../support/accessible";
 import { startE2eServer, type E2eServer } from "../support/e2e-server";
 
 let server: E2eServer;
@@ -12,11 +12,6 @@ test.beforeAll(async () => {
 test.afterAll(async () => {
   await server.close();
 });
-
-async function expectAccessible(page: Page): Promise<void> {
-  const { violations } = await new AxeBuilder({ page }).analyze();
-  expect(violations.map(({ id, nodes }) => `${id}: ${nodes[0]?.html}`)).toEqual([]);
-}
 
 test("checks a scale, offers the other one first, and a lead clears it", async ({ page }) => {
   await server.signIn(page.context(), "coordinator");

@@ -1,7 +1,8 @@
 /** One bag sorted on the built program, at 360 px: piles, a reject, what is missing, a reload, and undo. */
 import { expect, test } from "@playwright/test";
+import { expectAccessible } from "../support/accessible";
 import { startE2eServer, type E2eServer } from "../support/e2e-server";
-import { addPile, expectAccessible, save, sortingShed } from "../support/sorting-page";
+import { addPile, save, sortingShed } from "../support/sorting-page";
 
 let server: E2eServer;
 let shed: ReturnType<typeof sortingShed>;

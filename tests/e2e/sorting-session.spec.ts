@@ -4,15 +4,9 @@
  */
 import { expect, test, type Browser, type Page } from "@playwright/test";
 import type { Role } from "@/lib/core/permissions";
+import { expectAccessible } from "../support/accessible";
 import { startE2eServer, type E2eServer } from "../support/e2e-server";
-import {
-  addPile,
-  expectAccessible,
-  onPan,
-  save,
-  shown,
-  sortingShed,
-} from "../support/sorting-page";
+import { addPile, onPan, save, shown, sortingShed } from "../support/sorting-page";
 
 let server: E2eServer;
 let shed: ReturnType<typeof sortingShed>;

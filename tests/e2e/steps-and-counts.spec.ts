@@ -1,7 +1,7 @@
 /** A lot shredded on a phone, from its page to the flake; and a bin counted that the book calls empty. */
-import AxeBuilder from "@axe-core/playwright";
 import { expect, test, type Page } from "@playwright/test";
 import { newId } from "@/lib/core/ids";
+import { expectAccessible } from "../support/accessible";
 import { startE2eServer, type E2eServer } from "../support/e2e-server";
 
 let server: E2eServer;
@@ -47,16 +47,6 @@ async function filledLot(page: Page, grams: number, colourCode: string): Promise
   expect(answer.status(), await answer.text()).toBe(200);
   const receipt = (await answer.json()) as { lot: { number: number } };
   return receipt.lot.number;
-}
-
-async function expectAccessible(page: Page): Promise<void> {
-  const { violations } = await new AxeBuilder({ page }).analyze();
-  expect(violations.map(({ id, nodes }) => `${id}: ${nodes[0]?.html}`)).toEqual([]);
-  expect(
-    await page.evaluate(
-      () => document.documentElement.scrollWidth - document.documentElement.clientWidth,
-    ),
-  ).toBe(0);
 }
 
 const held = (number: number): number =>

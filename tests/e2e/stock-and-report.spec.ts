@@ -1,8 +1,8 @@
 /** What the shelf and the report show of a demo's eight months, and that the downloaded files say what the ledger says. */
 import fs from "node:fs";
-import AxeBuilder from "@axe-core/playwright";
 import { expect, test, type Page } from "@playwright/test";
 import Papa from "papaparse";
+import { expectAccessible } from "../support/accessible";
 import { startE2eServer, type E2eServer } from "../support/e2e-server";
 
 let server: E2eServer;
@@ -13,17 +13,6 @@ test.beforeAll(async () => {
 test.afterAll(async () => {
   await server.close();
 });
-
-async function expectAccessible(page: Page): Promise<void> {
-  const { violations } = await new AxeBuilder({ page }).analyze();
-  expect(violations.map(({ id, nodes }) => `${id}: ${nodes[0]?.html}`)).toEqual([]);
-  // A page that can be pushed sideways loses what stands at its edge.
-  expect(
-    await page.evaluate(
-      () => document.documentElement.scrollWidth - document.documentElement.clientWidth,
-    ),
-  ).toBe(0);
-}
 
 const grams = (sql: string): number => server.query<{ grams: number }>(sql)[0]?.grams ?? 0;
 /** As the pages write it, but for the thin space of thousands: halves go up, which toFixed does not promise. */

@@ -5,12 +5,12 @@
 import fs from "node:fs";
 import os from "node:os";
 import path from "node:path";
-import AxeBuilder from "@axe-core/playwright";
 import { chromium, expect, test, type Browser, type Page } from "@playwright/test";
 import Papa from "papaparse";
 import { SHEETS } from "@/lib/bags/rules/tag-sheet";
 import { formatCode } from "@/lib/core/bag-code";
 import { installedBrowser } from "../support/browser.mjs";
+import { expectAccessible } from "../support/accessible";
 import { startE2eServer, type E2eServer } from "../support/e2e-server";
 import { writeFilm } from "../support/film";
 import { cut, missingPrintTool, renderPages } from "../support/scan-sheets";
@@ -30,21 +30,16 @@ test.afterAll(async () => {
   await server.close();
 });
 
-async function isAccessible(page: Page): Promise<void> {
-  const { violations } = await new AxeBuilder({ page }).analyze();
-  expect(violations.map(({ id, nodes }) => `${id}: ${nodes[0]?.html ?? ""}`)).toEqual([]);
-}
-
 /** Orders three tags for the point and prints them. @returns the first code and its label's picture */
 async function printTags(page: Page): Promise<{ code: string; film: string }> {
   await page.goto(`${server.url}/tags`);
   await expect(page.getByLabel("How many")).toHaveValue("21");
-  await isAccessible(page);
+  await expectAccessible(page);
   await page.getByLabel("How many").fill("3");
   await page.getByLabel("For which point").selectOption({ label: "Harbour Road Library" });
   await page.getByRole("button", { name: "Order and print" }).click();
   await expect(page).toHaveURL(/\/tags\/[0-9a-f-]{36}\/print$/);
-  await isAccessible(page);
+  await expectAccessible(page);
   const order = new URL(page.url()).pathname.split("/")[2] ?? "";
   const [first] = server.query<{ code: string; point: string }>(
     `select b.code, p.name as point from bags b join points p on p.id = b.point_id
@@ -101,24 +96,24 @@ test("one bag from its printed tag to the CSV", async ({ page }) => {
     await desk.getByRole("radio", { name: "Blue", exact: true }).check();
     await desk.getByLabel("The whole bag is one kind").check();
     await desk.getByRole("radio", { name: "Lids" }).check();
-    await isAccessible(desk);
+    await expectAccessible(desk);
     await desk.getByRole("button", { name: "Save 2.160 kg, next bag" }).click();
     await expect(desk.getByText(/It is in lot 1, which now holds 2\.160 kg/)).toBeVisible();
     // Ready for the next bag, with the camera still running.
     await expect(desk.getByRole("button", { name: "Stop the camera" })).toBeVisible();
     await desk.goto(`${server.url}/stock`);
     await expect(desk.getByText("2.16").first()).toBeVisible();
-    await isAccessible(desk);
+    await expectAccessible(desk);
     await desk.goto(`${server.url}/b/${code}`);
     await expect(desk.getByText(formatCode(code)).first()).toBeVisible();
-    await isAccessible(desk);
+    await expectAccessible(desk);
   } finally {
     await phone.close();
   }
 
   await page.setViewportSize(PHONE.viewport);
   await page.goto(`${server.url}/reports?by=polymer,colour`);
-  await isAccessible(page);
+  await expectAccessible(page);
   const download = page.waitForEvent("download");
   await page.getByRole("link", { name: "Export CSV" }).click();
   const file = await (await download).path();

@@ -1,5 +1,4 @@
 /** The sorting table as a browser test uses it. */
-import AxeBuilder from "@axe-core/playwright";
 import { expect, type Locator, type Page } from "@playwright/test";
 import { newId } from "@/lib/core/ids";
 import type { E2eServer } from "./e2e-server";
@@ -9,11 +8,6 @@ export const shown = (code: string): string => `${code.slice(0, 4)}-${code.slice
 
 export const save = (page: Page): Locator =>
   page.getByRole("button", { name: /^Save \d+ weights?, close (bag|\d+ bags)$/ });
-
-export async function expectAccessible(page: Page): Promise<void> {
-  const { violations } = await new AxeBuilder({ page }).analyze();
-  expect(violations.map(({ id, nodes }) => `${id}: ${nodes[0]?.html ?? ""}`)).toEqual([]);
-}
 
 export async function addPile(page: Page, colour: string, kg: string): Promise<void> {
   await page.getByRole("button", { name: "Add pile" }).click();

@@ -6,7 +6,8 @@ import { inSnapshot, prepared, type Readable } from "@/lib/platform/database";
 import type { LotMovement, lotMovementsEndpoint, LotRecordRef } from "../contract/lots";
 import { requireLot } from "./lot-record";
 
-const PAGE = 50;
+/** A ticket a row on a phone: more would be a long way to the end, and twice the page. */
+const PAGE = 25;
 
 export const MOVEMENTS_SQL = `
   select n.entry_id as entryId, n.seq, e.kind, e.occurred_at as occurredAt, e.booked_day as bookedDay,

@@ -114,9 +114,10 @@ export type LotView = LotSummary & {
   labelCode: string;
   origins: LotOrigin[];
   heated: LotHeated[];
-  /** Bags whose piles went in, newest first; at most {@link MOST_BAGS}. */
+  /** Bags that went in, newest first; at most {@link MOST_BAGS}. */
   bags: LotBag[];
-  bagCount: number;
+  /** There are older ones: counting them would mean to walk everything that ever happened to the lot. */
+  moreBags: boolean;
 };
 
 const MOST_BAGS = 12;
@@ -158,29 +159,26 @@ function listHeated(db: Readable, lot: LotRow): LotHeated[] {
   ).all(lot.holderId, lot.materialId) as LotHeated[];
 }
 
-const BAGS_FROM = `
-  from (select session_id, sum(net_grams) as grams from fractions where lot_id = @lotId group by session_id) f
-  join sorting_sessions s on s.id = f.session_id and s.state = 'closed'
-  join sorting_bags sb on sb.session_id = s.id and sb.live = 1
-  join bags g on g.id = sb.bag_id
-  left join points p on p.id = g.point_id`;
-
 /**
- * A bag of one kind goes straight into its lot at the scale and has no sorting; it is found through the
- * lot's own lines, because those are indexed by holder.
+ * Walks the lot's own lines back from the newest, because those are indexed by holder, and stops when it has
+ * met enough: a bag of one kind goes in at the scale, any other by its sorting. A sorting of several bags is
+ * one entry, so up to {@link MOST_BAGS} entries hold at least as many bags.
  */
-const BAGS_SQL = `
-  select code, pointName, sortedAt, grams, count(*) over () as bagCount from (
-    select g.code, p.name as pointName, s.occurred_at as sortedAt, f.grams ${BAGS_FROM}
-    union all
-    select g.code, p.name, w.occurred_at, w.net_grams
-      from lines n
-      join entries e on e.id = n.entry_id and e.kind = 'weigh-in'
-      join weigh_ins w on w.id = substr(e.subject, 10) and w.state = 'posted'
-      join bags g on g.id = w.bag_id
-      left join points p on p.id = w.point_id
-     where n.holder_id = @holderId and n.grams > 0)
-   order by sortedAt desc, code limit ${MOST_BAGS}`;
+export const LOT_BAGS_SQL = `
+  select g.code, p.name as pointName, f.sortedAt, f.grams
+    from (
+      select n.entry_id as entryId, sum(n.grams) as grams, s.id as sessionId, w.bag_id as bagId,
+             w.point_id as pointId, coalesce(s.occurred_at, w.occurred_at) as sortedAt
+        from lines n
+        join entries e on e.id = n.entry_id and e.kind = 'sort'
+        left join weigh_ins w on e.subject like 'weigh-in:%' and w.id = substr(e.subject, 10) and w.state = 'posted'
+        left join sorting_sessions s on e.subject like 'sorting:%' and s.id = substr(e.subject, 9) and s.state = 'closed'
+       where n.holder_id = @holderId and n.grams > 0 and (w.id is not null or s.id is not null)
+       group by n.entry_id order by n.entry_id desc limit ${MOST_BAGS + 1}) f
+    left join sorting_bags sb on sb.session_id = f.sessionId and sb.live = 1
+    join bags g on g.id = coalesce(f.bagId, sb.bag_id)
+    left join points p on p.id = case when f.sessionId is null then f.pointId else g.point_id end
+   order by f.entryId desc, g.code limit ${MOST_BAGS + 1}`;
 
 /** One lot by its number, or null. */
 export function getLot(ctx: Context, number: number): LotView | null {
@@ -189,17 +187,14 @@ export function getLot(ctx: Context, number: number): LotView | null {
     const lot = prepared(db.client, LOT_SQL).get(number) as LotRow | undefined;
     if (!lot) return null;
     const { holderId: _holder, materialId: _material, ...summary } = lot;
-    const bags = prepared(db.client, BAGS_SQL).all({
-      lotId: lot.lotId,
-      holderId: lot.holderId,
-    }) as (LotBag & { bagCount: number })[];
+    const bags = prepared(db.client, LOT_BAGS_SQL).all({ holderId: lot.holderId }) as LotBag[];
     return {
       ...summary,
       seen: lastSeen(db, lot),
       origins: listOrigins(db, lot),
       heated: listHeated(db, lot),
-      bags: bags.map(({ bagCount: _count, ...bag }) => bag),
-      bagCount: bags[0]?.bagCount ?? 0,
+      bags: bags.slice(0, MOST_BAGS),
+      moreBags: bags.length > MOST_BAGS,
     };
   });
 }

@@ -3,7 +3,13 @@ import { newId } from "@/lib/core/ids";
 import { closeSorting } from "@/lib/sorting/commands/close";
 import { setLotPlace } from "@/lib/stock/commands/place";
 import { listLotMovements, MOVEMENTS_SQL } from "@/lib/stock/queries/lot-movements";
-import { getLot, HELD_LOTS_SQL, listLots, OPEN_LOTS_SQL } from "@/lib/stock/queries/lots";
+import {
+  getLot,
+  HELD_LOTS_SQL,
+  listLots,
+  LOT_BAGS_SQL,
+  OPEN_LOTS_SQL,
+} from "@/lib/stock/queries/lots";
 import { CELLS_SQL, getStock, LOOSE_SQL } from "@/lib/stock/queries/stock";
 import { layOutShelf } from "@/lib/stock/rules/shelf";
 import { waitingSql } from "@/lib/sorting/queries/waiting";
@@ -107,6 +113,10 @@ describe("stock", () => {
     const movements = plan(MOVEMENTS_SQL, { holderId: 1, entryId: 1, seq: 1, limit: 1 });
     expect(movements).toContain("lines_holder (holder_id=? AND entry_id<?)");
     expect(movements).not.toMatch(/SCAN/);
+    // The newest entries in the order of the index: a temporary tree would mean that all of them are read.
+    const bags = plan(LOT_BAGS_SQL, { holderId: 1 });
+    expect(bags).toContain("lines_holder (holder_id=?)");
+    expect(bags).not.toMatch(/SCAN (?!f\b)|TEMP B-TREE FOR (GROUP|ORDER)/);
     const waiting = plan(waitingSql([]), { since: 0, id: "" });
     expect(waiting).toContain("bags_state_since (state=? AND state_since>?)");
     expect(waiting).not.toMatch(/SCAN/);
@@ -127,7 +137,7 @@ describe("a lot", () => {
     ]);
     expect(lot?.heated).toEqual([{ times: 0, grams: 1895 }]);
     expect(lot?.bags.map((bag) => bag.grams).sort()).toEqual([1295, 600]);
-    expect(lot?.bagCount).toBe(2);
+    expect(lot?.moreBags).toBe(false);
 
     const { movements, next } = listLotMovements(shed.ctx("volunteer"), { number: 1 });
     expect(
@@ -155,6 +165,14 @@ describe("a lot", () => {
     expect(seen).toHaveLength(120);
     expect(new Set(seen).size).toBe(120);
     expect([...seen].sort((a, b) => b - a)).toEqual(seen);
+
+    // Of its bags the newest twelve are named.
+    const lot = getLot(shed.ctx("volunteer"), 1);
+    const newest = listLotMovements(shed.ctx("volunteer"), { number: 1 }).movements;
+    expect(lot?.bags.map(({ code }) => code)).toEqual(
+      newest.slice(0, 12).map(({ bagCode }) => bagCode),
+    );
+    expect(lot?.moreBags).toBe(true);
   });
 
   it("is null or not found when there is none of that number", () => {

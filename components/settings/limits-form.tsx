@@ -30,10 +30,16 @@ const schema = z.object({
   lotWeeks: typed(limits.lotWeeks),
   storageKg: typed(limits.storageKg),
   storageDays: typed(limits.storageDays),
+  reservationDays: z
+    .string()
+    .trim()
+    .regex(/^\d{1,4}$/, "whole-number")
+    .transform(Number)
+    .pipe(z.number().min(1, "too-few").max(365, "too-large")),
 });
 type Typed = z.input<typeof schema>;
 
-const FIELDS = ["lotWeeks", "storageKg", "storageDays"] as const;
+const FIELDS = ["lotWeeks", "storageKg", "storageDays", "reservationDays"] as const;
 
 /** Age at which a lot closes, and the shed's storage limits. */
 export function LimitsForm({ standing }: { standing: StorageStanding }) {
@@ -45,6 +51,7 @@ export function LimitsForm({ standing }: { standing: StorageStanding }) {
       lotWeeks: standing.limits.lotWeeks?.toString() ?? "",
       storageKg: standing.limits.storageKg?.toString() ?? "",
       storageDays: standing.limits.storageDays?.toString() ?? "",
+      reservationDays: String(standing.limits.reservationDays),
     },
   });
   const submit = handleSubmit(async (values) => {
@@ -87,6 +94,14 @@ export function LimitsForm({ standing }: { standing: StorageStanding }) {
         inputMode="numeric"
         hint={`The oldest has lain here for ${standing.oldestDays} days.`}
         error={errorOf("storageDays")}
+      />
+      <TextField
+        {...register("reservationDays")}
+        label="A reservation lapses after"
+        unit="days"
+        inputMode="numeric"
+        hint="A mail to whoever reserved goes out the day before; prolonging counts from that day on."
+        error={errorOf("reservationDays")}
       />
       <Button type="submit" busy={save.pending}>
         Save the limits

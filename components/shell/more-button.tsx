@@ -1,7 +1,7 @@
 "use client";
 
 import { usePathname } from "next/navigation";
-import { useEffect, useRef, useState } from "react";
+import { useState } from "react";
 import { Late } from "@/components/ui/late";
 import { isInPlace, type Place } from "./places";
 
@@ -10,19 +10,11 @@ const loadSheet = async () => (await import("./more-sheet")).MoreSheet;
 /** The fifth cell of the bottom bar. Its sheet travels when it is first opened. */
 export function MoreButton({ places }: { places: Place[] }) {
   const [open, setOpen] = useState(false);
-  const button = useRef<HTMLButtonElement>(null);
   const path = usePathname();
   const inside = places.some((place) => isInPlace(path, place.href));
-  const wasOpen = useRef(false);
-  useEffect(() => {
-    // Only now is the sheet gone, and with it what kept the focus inside.
-    if (wasOpen.current && !open) button.current?.focus();
-    wasOpen.current = open;
-  }, [open]);
   return (
     <>
       <button
-        ref={button}
         type="button"
         aria-haspopup="dialog"
         onClick={() => setOpen(true)}

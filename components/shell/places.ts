@@ -7,6 +7,8 @@ export type PlaceId =
   | "weigh-in"
   | "sorting"
   | "stock"
+  | "runs"
+  | "catalogue"
   | "steps"
   | "counts"
   | "removals"
@@ -29,6 +31,8 @@ const ENTRIES: readonly Entry[] = [
   { id: "weigh-in", label: "Weigh-in", href: "/weigh-in", permission: "weighing.record" },
   { id: "sorting", label: "Sorting", href: "/sorting", permission: "sorting.record" },
   { id: "stock", label: "Stock", href: "/stock", permission: "stock.read" },
+  { id: "runs", label: "Runs", href: "/runs", permission: "production.read" },
+  { id: "catalogue", label: "Catalogue", href: "/catalogue", permission: "production.read" },
   { id: "steps", label: "Steps", href: "/steps", permission: "steps.record" },
   { id: "counts", label: "Counts", href: "/counts", permission: "stock.review" },
   { id: "removals", label: "Taken away", href: "/removals", permission: "removals.read" },

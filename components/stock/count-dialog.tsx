@@ -49,13 +49,10 @@ export function CountDialog({ lot, found, onSaved, onClose }: Props) {
     setAsked(true);
     const counted = sentFound(value, lists);
     if (!counted) return;
-    const result = await count.send({
-      number: lot.number,
-      occurredAt: rightNow(),
-      counted,
-      seen: lot.seen,
-      confirmed,
-    });
+    const result = await count.send(
+      { number: lot.number, occurredAt: rightNow(), counted, seen: lot.seen, confirmed },
+      { pressedAt: "occurredAt" },
+    );
     if (result.kind === "done") onSaved(result.receipt);
   }
 

@@ -23,6 +23,7 @@ import { errorsUnder } from "./field-errors";
 import { LeftFields, sentFound, type FoundValue } from "./left-fields";
 import type { LotFacts } from "./lot-facts";
 import { RefusalNotice } from "./refusal-notice";
+import { ReservedQuestion } from "./reserved-question";
 import { useBinDesk } from "./use-bin-desk";
 import { firstWeighing } from "./weighing-value";
 
@@ -53,26 +54,31 @@ export function IdentifyDialog({ lot, onSaved, onClose }: Props) {
   });
   const [leftTyped, setLeft] = useState<FoundValue>({ found: "", weighing: firstWeighing("") });
   const [asked, setAsked] = useState(false);
+  const [reservedToo, setReservedToo] = useState(false);
   const withScale = <V extends { weighing: AmountValue["weighing"] }>(value: V): V => ({
     ...value,
     weighing: { ...value.weighing, scaleId: value.weighing.scaleId || scaleId },
   });
   const [amount, left] = [withScale(typed), withScale(leftTyped)];
 
-  async function send() {
+  async function send(knowingly = reservedToo) {
     setAsked(true);
     const sent = sentAmount(amount, lists);
     if (polymer === "" || method === "" || !sent) return;
-    const result = await identify.send({
-      number: lot.number,
-      occurredAt: Date.now(),
-      polymer,
-      kind,
-      colourCode,
-      method,
-      amount: sent,
-      count: left.found === "" ? null : sentFound(left, lists),
-    });
+    const result = await identify.send(
+      {
+        number: lot.number,
+        occurredAt: Date.now(),
+        polymer,
+        kind,
+        colourCode,
+        method,
+        amount: sent,
+        count: left.found === "" ? null : sentFound(left, lists),
+        reservedToo: knowingly,
+      },
+      { pressedAt: "occurredAt" },
+    );
     if (result.kind === "done") onSaved(result.receipt);
   }
 
@@ -149,7 +155,14 @@ export function IdentifyDialog({ lot, onSaved, onClose }: Props) {
             said={identify.problem.detail}
           />
         ) : null}
-        <RefusalNotice command={identify} except={["lot-holds-less"]} />
+        <ReservedQuestion
+          command={identify}
+          onTake={() => {
+            setReservedToo(true);
+            void send(true);
+          }}
+        />
+        <RefusalNotice command={identify} except={["lot-holds-less", "lot-reserved"]} />
       </div>
     </Dialog>
   );

@@ -18,7 +18,14 @@ import { UndoRecord } from "./undo-record";
 
 type Props = {
   lot: LotFacts;
-  may: { count: boolean; identify: boolean; move: boolean; step: boolean; close: boolean };
+  may: {
+    count: boolean;
+    identify: boolean;
+    move: boolean;
+    step: boolean;
+    remove: boolean;
+    close: boolean;
+  };
 };
 type Opened = "count" | "empty" | "close" | "merge" | "split" | "identify";
 
@@ -117,6 +124,14 @@ export function LotActions({ lot, may }: Props) {
                 Split
               </Button>
             </>
+          ) : null}
+          {may.remove && (lot.heldGrams > 0 || lot.closedAt === null) ? (
+            <ButtonLink
+              variant="quiet"
+              href={{ pathname: "/removals/new", query: { lot: String(lot.number) } }}
+            >
+              Take away
+            </ButtonLink>
           ) : null}
           {may.close && lot.closedAt === null ? (
             <Button variant="quiet" onClick={() => setOpened("close")}>

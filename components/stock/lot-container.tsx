@@ -4,7 +4,7 @@ import { useRouter } from "next/navigation";
 import { useCommand } from "@/components/forms/use-command";
 import { QueryProvider } from "@/components/forms/query-provider";
 import { SelectField } from "@/components/ui/select-field";
-import { UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
+import { UNANSWERED_SENTENCE } from "@/components/forms/unanswered";
 import type { Id } from "@/lib/core/ids";
 import type { setLotContainerEndpoint } from "@/lib/stock/contract/lot-care";
 import { useDeskLists } from "../weighing/use-desk-lists";
@@ -31,7 +31,7 @@ function Choice({ number, containerId, containerName }: Props) {
       value={containerId ?? ""}
       disabled={save.pending}
       onChange={(event) => void choose(event.target.value)}
-      error={save.problem?.detail ?? (save.unreachable ? UNREACHABLE_SENTENCE : undefined)}
+      error={save.problem?.detail ?? (save.unreachable ? UNANSWERED_SENTENCE : undefined)}
       className="mt-4"
     >
       <option value="">None that is listed</option>

@@ -2,7 +2,7 @@
 
 import { useRouter } from "next/navigation";
 import { useState, type SubmitEvent } from "react";
-import { UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
+import { UNANSWERED_SENTENCE } from "@/components/forms/unanswered";
 import { useCommand } from "@/components/forms/use-command";
 import { Button } from "@/components/ui/button";
 import { TextField } from "@/components/ui/text-field";
@@ -40,7 +40,7 @@ export function LotPlace({ number, place, mayEdit }: Props) {
   const problem =
     save.fieldErrors.place ??
     save.problem?.detail ??
-    (save.unreachable ? UNREACHABLE_SENTENCE : undefined);
+    (save.unreachable ? UNANSWERED_SENTENCE : undefined);
   return (
     <form onSubmit={(event) => void send(event)} className="mt-4 flex items-end gap-2.5">
       <TextField

@@ -16,6 +16,7 @@ import { LeftFields, sentFound, type FoundValue } from "./left-fields";
 import type { LotFacts } from "./lot-facts";
 import { LotPicker } from "./lot-picker";
 import { RefusalNotice } from "./refusal-notice";
+import { ReservedQuestion } from "./reserved-question";
 import { useBinDesk } from "./use-bin-desk";
 import { firstWeighing, sentWeighing } from "./weighing-value";
 
@@ -41,6 +42,7 @@ export function MoveDialog({ lot, kind, onSaved, onClose }: Props) {
   const [to, setTo] = useState<LotSummary | null>(null);
   const [place, setPlace] = useState("");
   const [asked, setAsked] = useState(false);
+  const [reservedToo, setReservedToo] = useState(false);
   const withScale = <V extends { weighing: AmountValue["weighing"] }>(value: V): V => ({
     ...value,
     weighing: { ...value.weighing, scaleId: value.weighing.scaleId || scaleId },
@@ -48,19 +50,25 @@ export function MoveDialog({ lot, kind, onSaved, onClose }: Props) {
   const [amount, left] = [withScale(typed), withScale(leftTyped)];
   const holdsLess = command.problem?.code === "lot-holds-less";
 
-  async function send() {
+  async function send(knowingly = reservedToo) {
     setAsked(true);
     const count = left.found === "" ? null : sentFound(left, lists);
-    const base = { number: lot.number, occurredAt: Date.now(), count };
+    const base = { number: lot.number, occurredAt: Date.now(), count, reservedToo: knowingly };
     if (kind === "merge") {
       const sent = sentAmount(amount, lists);
       if (!to || !sent) return;
-      const result = await merge.send({ ...base, toNumber: to.number, amount: sent });
+      const result = await merge.send(
+        { ...base, toNumber: to.number, amount: sent },
+        { pressedAt: "occurredAt" },
+      );
       if (result.kind === "done") onSaved(result.receipt);
     } else {
       const sent = sentWeighing(amount.weighing, lists.containers);
       if (!sent) return;
-      const result = await split.send({ ...base, amount: sent, place });
+      const result = await split.send(
+        { ...base, amount: sent, place },
+        { pressedAt: "occurredAt" },
+      );
       if (result.kind === "done") onSaved(result.receipt);
     }
   }
@@ -150,7 +158,14 @@ export function MoveDialog({ lot, kind, onSaved, onClose }: Props) {
             said={command.problem?.detail ?? ""}
           />
         ) : null}
-        <RefusalNotice command={command} except={["lot-holds-less"]} />
+        <ReservedQuestion
+          command={command}
+          onTake={() => {
+            setReservedToo(true);
+            void send(true);
+          }}
+        />
+        <RefusalNotice command={command} except={["lot-holds-less", "lot-reserved"]} />
       </div>
     </Dialog>
   );

@@ -50,17 +50,10 @@ function Fields() {
     setAsked(true);
     const sent = sentWeighing(weighing, lists.containers);
     if (polymer === "" || kind === "" || colourCode === "" || sheet.trim() === "" || !sent) return;
-    const result = await open.send({
-      ...sent,
-      polymer,
-      kind,
-      colourCode,
-      form,
-      wash,
-      place,
-      sheet,
-      occurredAt: Date.now(),
-    });
+    const result = await open.send(
+      { ...sent, polymer, kind, colourCode, form, wash, place, sheet, occurredAt: Date.now() },
+      { pressedAt: "occurredAt" },
+    );
     if (result.kind !== "done") return;
     setDone(result.receipt);
     setAsked(false);

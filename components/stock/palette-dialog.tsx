@@ -3,11 +3,9 @@
 import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm, useWatch } from "react-hook-form";
 import type * as z from "zod";
-import { CommandNotice } from "@/components/forms/command-notice";
+import { FormDialog } from "@/components/forms/form-dialog";
 import { useCommand } from "@/components/forms/use-command";
-import { Button } from "@/components/ui/button";
 import { ChoiceTiles } from "@/components/ui/choice-tiles";
-import { Dialog } from "@/components/ui/dialog";
 import { TextField } from "@/components/ui/text-field";
 import { fieldSentence } from "@/lib/core/messages";
 import {
@@ -66,65 +64,55 @@ export function PaletteDialog({ colour, onClose, onSaved }: PaletteDialogProps) 
     return fieldSentence(/^[a-z][a-z-]*$/.test(issue) ? issue : "empty");
   };
   return (
-    <Dialog
-      open
-      onClose={onClose}
+    <FormDialog
       title={colour ? `Change ${colour.name}` : "Add a colour"}
-      actions={
-        <>
-          <Button variant="quiet" onClick={onClose}>
-            Cancel
-          </Button>
-          <Button type="submit" form="palette-form" busy={command.pending}>
-            {colour ? "Save changes" : "Add the colour"}
-          </Button>
-        </>
-      }
+      submit={colour ? "Save changes" : "Add the colour"}
+      onSubmit={save}
+      onClose={onClose}
+      command={command}
+      shownFields={["name", "hex", "look"]}
     >
-      <form id="palette-form" onSubmit={save} noValidate className="grid gap-4">
-        <CommandNotice command={command} shownFields={["name", "hex", "look"]} />
+      <TextField
+        {...register("name")}
+        label="Name"
+        hint={colour ? "Stock of this colour takes the new name too." : undefined}
+        error={errorOf("name")}
+        maxLength={40}
+        autoComplete="off"
+      />
+      <div className="flex items-end gap-3">
         <TextField
-          {...register("name")}
-          label="Name"
-          hint={colour ? "Stock of this colour takes the new name too." : undefined}
-          error={errorOf("name")}
-          maxLength={40}
+          {...register("hex")}
+          label="Value"
+          hint="As it looks on a screen."
+          mono
+          maxLength={7}
           autoComplete="off"
+          spellCheck={false}
+          error={errorOf("hex")}
+          className="grow"
         />
-        <div className="flex items-end gap-3">
-          <TextField
-            {...register("hex")}
-            label="Value"
-            hint="As it looks on a screen."
-            mono
-            maxLength={7}
-            autoComplete="off"
-            spellCheck={false}
-            error={errorOf("hex")}
-            className="grow"
+        <label className="relative mb-0.5 block size-13 shrink-0 overflow-hidden rounded-control border border-edge has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-act wide:size-11.5">
+          <PaletteSwatch hex={shown} look={look} size={56} />
+          <span className="sr-only">Choose the value from the system&apos;s colours</span>
+          <input
+            type="color"
+            value={shown}
+            onChange={(event) =>
+              setValue("hex", event.target.value, { shouldDirty: true, shouldValidate: true })
+            }
+            className="absolute inset-0 size-full cursor-pointer opacity-0"
           />
-          <label className="relative mb-0.5 block size-13 shrink-0 overflow-hidden rounded-control border border-edge has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-act wide:size-11.5">
-            <PaletteSwatch hex={shown} look={look} size={56} />
-            <span className="sr-only">Choose the value from the system&apos;s colours</span>
-            <input
-              type="color"
-              value={shown}
-              onChange={(event) =>
-                setValue("hex", event.target.value, { shouldDirty: true, shouldValidate: true })
-              }
-              className="absolute inset-0 size-full cursor-pointer opacity-0"
-            />
-          </label>
-        </div>
-        <ChoiceTiles
-          {...register("look")}
-          legend="Looks like"
-          choices={LOOKS}
-          columns={3}
-          defaultValue={colour?.look ?? "solid"}
-          error={errorOf("look")}
-        />
-      </form>
-    </Dialog>
+        </label>
+      </div>
+      <ChoiceTiles
+        {...register("look")}
+        legend="Looks like"
+        choices={LOOKS}
+        columns={3}
+        defaultValue={colour?.look ?? "solid"}
+        error={errorOf("look")}
+      />
+    </FormDialog>
   );
 }

@@ -1,7 +1,7 @@
 "use client";
 
 import { useEffect, useRef } from "react";
-import { UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
+import { UNANSWERED_SENTENCE } from "@/components/forms/unanswered";
 import { Notice } from "@/components/ui/notice";
 import type { ErrorCode, ProblemDocument } from "@/lib/core/errors";
 
@@ -22,8 +22,12 @@ export function RefusalNotice({ command: { problem, unreachable }, except = [] }
     problem?.code === "invalid" ? (problem.errors?.[0]?.detail ?? problem.detail) : problem?.detail;
   return (
     <div ref={place} className="scroll-mt-20 scroll-mb-28">
-      <Notice tone={unreachable ? "warn" : "bad"} title="Not saved" live="alert">
-        {unreachable ? UNREACHABLE_SENTENCE : said}
+      <Notice
+        tone={unreachable ? "warn" : "bad"}
+        title={unreachable ? "No answer" : "Not saved"}
+        live="alert"
+      >
+        {unreachable ? UNANSWERED_SENTENCE : said}
       </Notice>
     </div>
   );

@@ -2,7 +2,7 @@
 
 import { useRouter } from "next/navigation";
 import { useEffect, useState } from "react";
-import { UNREACHABLE_SENTENCE } from "@/components/forms/problem-document";
+import { UNANSWERED_SENTENCE } from "@/components/forms/unanswered";
 import { useCommand } from "@/components/forms/use-command";
 import { Button } from "@/components/ui/button";
 import type { Endpoint } from "@/lib/core/endpoint";
@@ -40,7 +40,7 @@ export function UndoRecord({ path, id, until, what, onUndone }: Props) {
     router.refresh();
   }
 
-  const said = undo.problem?.detail ?? (undo.unreachable ? UNREACHABLE_SENTENCE : null);
+  const said = undo.problem?.detail ?? (undo.unreachable ? UNANSWERED_SENTENCE : null);
   if (left !== null && left <= 0 && said === null) return null;
   const seconds = Math.max(0, Math.floor((left ?? 0) / 1000));
   return (

@@ -32,10 +32,18 @@ export const schemeLimits = sqliteTable(
     /** Fire and permit limits of what may lie in the shed; null: none set. */
     storageGrams: integer("storage_grams"),
     storageDays: integer("storage_days"),
+    /** A reservation lapses after so many days. */
+    reservationDays: integer("reservation_days").notNull().default(14),
   },
   (t) => [
     check("scheme_limits_one_row", sql`${t.id} = 1`),
-    wholeNumbers("scheme_limits_whole_numbers", t.lotWeeks, t.storageGrams, t.storageDays),
+    wholeNumbers(
+      "scheme_limits_whole_numbers",
+      t.lotWeeks,
+      t.storageGrams,
+      t.storageDays,
+      t.reservationDays,
+    ),
   ],
 );
 

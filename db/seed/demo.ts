@@ -23,6 +23,8 @@ import { seeded } from "./random";
 import { mend } from "./mending";
 import signIns from "./sign-ins.json";
 import { equip } from "./workshop";
+import { fillCatalogue } from "./workshop-catalogue";
+import { planRuns } from "./workshop-plans";
 import { MORE_VOLUNTEERS, NAMES, POINTS, SCALES, SCHEME, TARES } from "./story";
 
 const MONTHS_IN_DAYS = 243;
@@ -82,6 +84,7 @@ export async function seedDemo(
   const sheds = addPoints(cast, coordinator);
   const tools = addTools(cast, coordinator);
   const works = equip(cast, tools, firstDay, start);
+  const workshop = fillCatalogue(cast, start);
   const waiting: Waiting[] = fillShed(cast, sheds, tools, works, {
     firstDay,
     now,
@@ -89,6 +92,7 @@ export async function seedDemo(
   });
   mend(cast, tools, sheds, now);
   placeLots(cast, now);
+  planRuns(cast, workshop, now);
 
   const count = (sql: string): number => db.reader.client.prepare(sql).pluck().get() as number;
   return {

@@ -19,6 +19,7 @@ export function mend(cast: Cast, tools: Tools, sheds: readonly Shed[], now: Inst
     lotWeeks: 16,
     storageKg: 1_500,
     storageDays: 365,
+    reservationDays: 14,
   });
   const lead = cast.as(cast.lead, "lead", instant(now - DAY_MS));
   const wrong = db

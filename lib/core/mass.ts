@@ -2,6 +2,7 @@
  * Mass as whole numbers. The ledger holds integer grams, a scale's reading is integer milligrams;
  * no floating point touches a stored amount. Text becomes a number by its digits, never by parseFloat.
  */
+import { readDecimal, type DecimalProblem } from "./decimal";
 
 declare const gramsBrand: unique symbol;
 declare const deltaBrand: unique symbol;
@@ -35,8 +36,7 @@ export function gramsFromMilligrams(milligrams: number): number {
 
 export type MassUnit = "kg" | "g";
 
-export type MassReadingProblem =
-  "empty" | "not-a-number" | "could-be-thousands" | "negative" | "too-precise" | "too-large";
+export type MassReadingProblem = DecimalProblem;
 
 export type MassReading =
   { ok: true; milligrams: number } | { ok: false; problem: MassReadingProblem };
@@ -65,24 +65,10 @@ export function readMass(text: string, unit: MassUnit): MassReading {
     scale = "g";
     rest = rest.slice(0, -1);
   }
-  if (rest === "") return { ok: false, problem: "empty" };
-  if (/^[-\u2212]/.test(rest)) return { ok: false, problem: "negative" };
-  if (/^[1-9]\d{0,2}(,\d{3})+$/.test(rest)) return { ok: false, problem: "could-be-thousands" };
-  if (/^[1-9]\d{0,2}(\.\d{3}){2,}$/.test(rest) || /^\d+([.,]\d+){2,}$/.test(rest)) {
-    return { ok: false, problem: "could-be-thousands" };
-  }
-  const match = /^(\d*)(?:[.,](\d*))?$/.exec(rest);
-  if (!match || (match[1] === "" && (match[2] ?? "") === "")) {
-    return { ok: false, problem: "not-a-number" };
-  }
-  const places = scale === "kg" ? 6 : 3;
-  const fraction = (match[2] ?? "").replace(/0+$/, "");
-  if (fraction.length > places) return { ok: false, problem: "too-precise" };
-  const digits = (match[1] ?? "") + fraction.padEnd(places, "0");
-  if (digits.replace(/^0+/, "").length > 12) return { ok: false, problem: "too-large" };
-  const milligrams = Number(digits);
-  if (milligrams > LARGEST_MILLIGRAMS) return { ok: false, problem: "too-large" };
-  return { ok: true, milligrams };
+  const read = readDecimal(rest, scale === "kg" ? 6 : 3);
+  if (!read.ok) return read;
+  if (read.value > LARGEST_MILLIGRAMS) return { ok: false, problem: "too-large" };
+  return { ok: true, milligrams: read.value };
 }
 
 /**

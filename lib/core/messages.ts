@@ -6,6 +6,7 @@ import { CAPTURE_SENTENCES, text, type Sentence } from "./capture-messages";
 import type { ErrorCode, ErrorDetail } from "./errors";
 import { PHOTO_SENTENCES } from "./photo-messages";
 import { STOCK_SENTENCES } from "./stock-messages";
+import { PRODUCTION_SENTENCES } from "./production-messages";
 import { REMOVAL_SENTENCES } from "./removal-messages";
 
 const SENTENCES: Record<ErrorCode, Sentence> = {
@@ -13,6 +14,7 @@ const SENTENCES: Record<ErrorCode, Sentence> = {
   ...PHOTO_SENTENCES,
   ...STOCK_SENTENCES,
   ...REMOVAL_SENTENCES,
+  ...PRODUCTION_SENTENCES,
   "signed-out": () => "You are not signed in. What you typed is kept; sign in and send it again.",
   "wrong-sign-in": () => "That address and password do not fit together. Check both and try again.",
   "sign-in-slowed": (v) =>
@@ -148,6 +150,20 @@ const FIELD_SENTENCES: Readonly<Record<string, string>> = {
   "too-long": "This is too long.",
   "too-short": "Say it in a few words, so that whoever reads the history understands.",
   "not-a-number": "This is not a number. Look at the label.",
+  "could-be-thousands":
+    "This could be a thousand or a fraction. Type it with a point, 1.234, or without a mark, 1234.",
+  negative: "This cannot be below zero.",
+  "too-precise": "This has more decimals than count here.",
+  "too-large": "This is larger than anything here.",
+  "out-of-range": "This is too small or too large for that.",
+  "mass-or-volume": "Give the volume or the mass of one piece, one of the two.",
+  "one-at-least": "Choose at least one.",
+  "shares-not-whole": "The shares must add up to 100 %.",
+  "colour-twice": "A colour stands there twice. Give it one share.",
+  "above-ceiling":
+    "This is hotter than the polymer may ever get. Type what stands beside it, or less.",
+  "polymer-twice": "One polymer is named twice. Keep one temperature for each.",
+  "sheet-size": "A sheet has a length, a width and a thickness.",
   "too-long-minutes": "That is more than two weeks. Type the minutes.",
   "not-an-id": "This is not a number that the program gave out. Reload the page and choose again.",
   "not-a-day": "This is not a day. Choose one such as 6 May 2026.",

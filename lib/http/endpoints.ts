@@ -8,6 +8,9 @@ import * as bags from "@/lib/bags/contract";
 import * as identity from "@/lib/identity/contract";
 import * as ledger from "@/lib/ledger/contract";
 import * as points from "@/lib/points/contract";
+import * as catalogue from "@/lib/production/contract/catalogue";
+import * as plans from "@/lib/production/contract/plans";
+import * as reservations from "@/lib/production/contract/reservations";
 import * as destinations from "@/lib/removals/contract/destinations";
 import * as removalReceipts from "@/lib/removals/contract/receipts";
 import * as removals from "@/lib/removals/contract/removals";
@@ -47,6 +50,9 @@ const CONTRACTS: readonly Readonly<Record<string, unknown>>[] = [
   lotCare,
   counts,
   moves,
+  catalogue,
+  plans,
+  reservations,
   steps,
   palette,
   weighing,

@@ -13,6 +13,7 @@ import { repeat, underLease } from "@/lib/platform/jobs";
 import { log } from "@/lib/platform/logger";
 import { SettingsError } from "@/lib/platform/settings-error";
 import { storage } from "@/lib/platform/storage";
+import { tendReservations } from "@/lib/production/commands/lapse";
 import { closeOldLots } from "@/lib/stock/commands/close-lot";
 import { tidyPhotos } from "@/lib/uploads/commands/tidy";
 
@@ -55,15 +56,7 @@ function startTidyingPhotos(): void {
     const db = database();
     if (now() < due) return;
     await underLease(db, "tidy-photos", HOUR, now, async () => {
-      const ctx: Context = {
-        actor: { kind: "system" },
-        now: now(),
-        requestId: randomUUID(),
-        bodyHash: "",
-        address: null,
-        db,
-      };
-      const done = await tidyPhotos(ctx, storage());
+      const done = await tidyPhotos(systemContext(db), storage());
       log.info("photos-tidied", done);
       return JSON.stringify(done);
     });
@@ -76,17 +69,33 @@ function startClosingOldLots(): void {
   repeat("close-old-lots", HOUR, async () => {
     const db = database();
     await underLease(db, "close-old-lots", MINUTE, now, () => {
-      const closed = closeOldLots({
-        actor: { kind: "system" },
-        now: now(),
-        requestId: randomUUID(),
-        bodyHash: "",
-        address: null,
-        db,
-      });
+      const closed = closeOldLots(systemContext(db));
       return Promise.resolve(`closed ${closed}`);
     });
   });
+}
+
+/** Reservations: a mail before they lapse and when they turn short, and the lapse itself. */
+function startTendingReservations(): void {
+  repeat("reservations", 5 * MINUTE, async () => {
+    const db = database();
+    await underLease(db, "reservations", MINUTE, now, () => {
+      const done = tendReservations(systemContext(db));
+      return Promise.resolve(JSON.stringify(done));
+    });
+  });
+}
+
+/** The program itself acts. */
+function systemContext(db: Context["db"]): Context {
+  return {
+    actor: { kind: "system" },
+    now: now(),
+    requestId: randomUUID(),
+    bodyHash: "",
+    address: null,
+    db,
+  };
 }
 
 /** The whole ledger, soon after the start and then once a day; in a thread, so no request waits for it. */
@@ -117,6 +126,7 @@ export function startServer(): void {
   startTidying();
   startTidyingPhotos();
   startClosingOldLots();
+  startTendingReservations();
   if (found.mode === "production" || found.mode === "demo") startVerifying();
   log.info("started", {
     mode: found.mode,

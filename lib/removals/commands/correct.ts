@@ -56,7 +56,7 @@ export function correctRemoval(ctx: Context, input: CorrectRemovalInput): Correc
         planRemoval(
           tx,
           ctx,
-          { ...input.replacement, confirmedAbove: true },
+          { ...input.replacement, confirmedAbove: true, reservedToo: true },
           { lines: listStandingLines(tx, wrong.actId), destinationId: wrong.destinationId },
           ["replacement"],
         );

@@ -24,6 +24,7 @@ import {
 } from "@/lib/scales/rules/reading";
 import { combinedTolerance } from "@/lib/scales/rules/scale";
 import { REJECT_BIN_CODE } from "@/lib/sorting/terms";
+import { askForReserved } from "@/lib/stock/queries/reserved";
 import type { Destination } from "../contract/destinations";
 import type { RemovalData, Taking } from "../contract/removals";
 import { getDestination } from "../queries/destinations";
@@ -87,6 +88,7 @@ export function planRemoval(
     return requireLot(tx, lotNumber, [...path, "lotNumber"]);
   });
   const loads = places.map(({ lotId, where, ...place }, index) => {
+    const lotNumber = taking.loads[index]?.lotNumber ?? null;
     const path = [...at, "taking", "loads", index];
     const { heldGrams, thenGrams } = bookOf(tx, place, correcting);
     const whole = isWhole(taking, index);
@@ -105,6 +107,10 @@ export function planRemoval(
         },
         [...at, "confirmedAbove"],
       );
+    }
+    if (!correcting && lotId !== null && lotNumber !== null) {
+      const left = whole ? 0 : book - weighed.grams;
+      askForReserved(tx, { lotId, number: lotNumber }, left, data.reservedToo ?? false, at);
     }
     return { lotId, place, load, weighed };
   });

@@ -66,6 +66,8 @@ export const removalDataSchema = z.object({
   taking: takingSchema,
   /** It is more than the book holds, was weighed again, and stays so. */
   confirmedAbove: z.boolean().default(false),
+  /** Grams that are reserved for a run may be taken: it was asked. */
+  reservedToo: z.boolean().optional(),
 });
 export type RemovalData = z.output<typeof removalDataSchema>;
 
@@ -116,7 +118,7 @@ export const correctRemovalEndpoint = endpoint({
     id: idSchema<"removal">(),
     reason: reasonSchema,
     /** null: nothing was taken away. */
-    replacement: removalDataSchema.omit({ confirmedAbove: true }).nullable(),
+    replacement: removalDataSchema.omit({ confirmedAbove: true, reservedToo: true }).nullable(),
   }),
   output: z.object({
     id: z.string(),

@@ -12,11 +12,12 @@ export function setLimits(ctx: Context, input: z.output<typeof setLimitsSchema>)
   allow(ctx, "settings.manage");
   return once<Limits>(ctx, "PUT /api/settings/limits", input.requestId, (tx) => {
     const before = readLimits(tx);
-    const { lotWeeks, storageKg, storageDays } = input;
+    const { lotWeeks, storageKg, storageDays, reservationDays } = input;
     prepared(
       tx.client,
-      "update scheme_limits set lot_weeks = ?, storage_grams = ?, storage_days = ? where id = 1",
-    ).run(lotWeeks, storageKg === null ? null : storageKg * 1000, storageDays);
+      `update scheme_limits set lot_weeks = ?, storage_grams = ?, storage_days = ?, reservation_days = ?
+        where id = 1`,
+    ).run(lotWeeks, storageKg === null ? null : storageKg * 1000, storageDays, reservationDays);
     recordAudit(tx, ctx, {
       action: "settings.limits",
       subjectKind: "settings",
@@ -25,11 +26,13 @@ export function setLimits(ctx: Context, input: z.output<typeof setLimitsSchema>)
         lotWeeks,
         storageKg,
         storageDays,
+        reservationDays,
         lotWeeksBefore: before.lotWeeks,
         storageKgBefore: before.storageKg,
         storageDaysBefore: before.storageDays,
+        reservationDaysBefore: before.reservationDays,
       },
     });
-    return { lotWeeks, storageKg, storageDays };
+    return { lotWeeks, storageKg, storageDays, reservationDays };
   });
 }

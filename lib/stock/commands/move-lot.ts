@@ -125,6 +125,7 @@ type Move = {
   amount: AmountInput;
   method: IdentifyMethod | null;
   left: FoundInput | null;
+  reservedToo?: boolean | undefined;
   occurredAt: Instant;
 };
 
@@ -143,6 +144,7 @@ function moveIn(tx: Tx, ctx: Context, move: Move): MoveReceipt {
     all,
     weighed,
     left: move.left,
+    reservedToo: move.reservedToo ?? false,
     occurredAt,
     path: [],
   });

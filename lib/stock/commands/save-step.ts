@@ -40,7 +40,7 @@ export function saveStep(ctx: Context, input: SaveStepInput): StepReceipt {
     const occurredAt = doneAt(claimed, youngest(inputs), ctx.now);
     const shape = requireShape(input.kind, inputs);
     const outputs = readOutputs(tx, input, inputs, shape, occurredAt);
-    const taken = takeAllIn(tx, ctx, inputs, occurredAt);
+    const taken = takeAllIn(tx, ctx, inputs, occurredAt, input.reservedToo ?? false);
     const judged = judgeContent(tx, input, withGrams(inputs, taken), outputs, shape.damp);
 
     const closed = inputs.filter(({ lot }) => closeLotIn(tx, lot.lotId, ctx.now, "step"));
@@ -112,6 +112,7 @@ function takeAllIn(
   ctx: Context,
   inputs: readonly InputRead[],
   occurredAt: Instant,
+  reservedToo: boolean,
 ): TakenFromLot[] {
   return inputs.map((read, at) =>
     takeFromLotIn(tx, ctx, {
@@ -121,6 +122,7 @@ function takeAllIn(
       all: read.all,
       weighed: read.weighed,
       left: read.left,
+      reservedToo,
       occurredAt,
       path: ["inputs", at],
     }),

@@ -12,6 +12,7 @@ import { may, requirePerson, type Context } from "@/lib/platform/context";
 import type { Tx } from "@/lib/platform/database";
 import type { FoundInput } from "../contract/weighed";
 import { bookGrams, type LotRecord } from "../queries/lot-record";
+import { askForReserved } from "../queries/reserved";
 import type { Weighed } from "../queries/weighed";
 import { judgeTaking } from "../rules/taking";
 import { postCountIn, readFound, type Found } from "./post-count";
@@ -28,6 +29,8 @@ export type LotTaking = {
   weighed: Weighed | null;
   /** What is left in the container, once it was asked for. */
   left: FoundInput | null;
+  /** Grams that are promised to a run may be taken: it was asked. */
+  reservedToo: boolean;
   occurredAt: Instant;
   /** Of the taking in the input; the count on the spot is its field `count`. */
   path: readonly (string | number)[];
@@ -51,7 +54,7 @@ export type TakenFromLot = {
  * is the count, and nobody is asked.
  *
  * @throws AppError `lot-holds-less` with book and wanted kilograms, until `left` says what is in the container;
- *   `lot-empty` when everything is taken of a lot that holds nothing
+ *   `lot-empty` when everything is taken of a lot that holds nothing; `lot-reserved` until it is taken knowingly
  */
 export function takeFromLotIn(tx: Tx, ctx: Context, of: LotTaking): TakenFromLot {
   const { lot, path } = of;
@@ -65,6 +68,7 @@ export function takeFromLotIn(tx: Tx, ctx: Context, of: LotTaking): TakenFromLot
       toleranceMilligrams: of.toleranceMilligrams,
       all: of.all,
     });
+  askForReserved(tx, lot, of.all ? 0 : book - grams, of.reservedToo, path);
   let verdict = judge(book);
   let countId: Id<"count"> | null = null;
   if (verdict.kind !== "fine") {

@@ -10,6 +10,8 @@ const limitsSchema = z.object({
   storageKg: z.number().int().min(1, "too-few").max(1_000_000, "too-large").nullable(),
   /** Longest that anything may lie there, in days; null: no limit is set. */
   storageDays: z.number().int().min(1, "too-few").max(3_650, "too-large").nullable(),
+  /** What is reserved for a run is free again after so many days. */
+  reservationDays: z.number().int().min(1, "too-few").max(365, "too-large").default(14),
 });
 export type Limits = z.output<typeof limitsSchema>;
 

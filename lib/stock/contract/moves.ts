@@ -26,6 +26,8 @@ const moveFields = {
   occurredAt: instantSchema,
   /** What is left in the container: asked for when more was taken than the book held. */
   count: onTheSpotSchema,
+  /** Grams that are reserved for a run may be taken: it was asked. */
+  reservedToo: z.boolean().optional(),
 };
 
 export const moveReceiptSchema = z.object({

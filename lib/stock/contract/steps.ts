@@ -93,9 +93,11 @@ export const saveStepSchema = z.object({
   /** Made by the client; the id of the step. */
   requestId: requestIdSchema,
   ...stepFields,
+  /** Grams that are reserved for a run may be taken: it was asked. */
+  reservedToo: z.boolean().optional(),
 });
 export type SaveStepInput = z.output<typeof saveStepSchema>;
-export type StepContent = Omit<SaveStepInput, "requestId">;
+export type StepContent = Omit<SaveStepInput, "requestId" | "reservedToo">;
 
 export const stepReceiptSchema = z.object({
   stepId: idSchema<"step">(),

@@ -7,16 +7,13 @@ import { requireScheme } from "@/lib/platform/scheme";
 import type { Limits, StorageStanding } from "../contract/limits";
 
 export function readLimits(db: Readable): Limits {
-  const { lotWeeks, storageGrams, storageDays } = prepared(
+  const { storageGrams, ...limits } = prepared(
     db.client,
-    `select lot_weeks as lotWeeks, storage_grams as storageGrams, storage_days as storageDays
+    `select lot_weeks as lotWeeks, storage_grams as storageGrams, storage_days as storageDays,
+            reservation_days as reservationDays
        from scheme_limits where id = 1`,
-  ).get() as { lotWeeks: number | null; storageGrams: number | null; storageDays: number | null };
-  return {
-    lotWeeks,
-    storageKg: storageGrams === null ? null : Math.floor(storageGrams / 1000),
-    storageDays,
-  };
+  ).get() as Omit<Limits, "storageKg"> & { storageGrams: number | null };
+  return { ...limits, storageKg: storageGrams === null ? null : Math.floor(storageGrams / 1000) };
 }
 
 /** What lies in the shed (bags, lots, work in hand, reject bin), since when the oldest, and the limits. */

@@ -10,10 +10,12 @@ import type { Stock, StockCell, StockColour, StockFilter, stockEndpoint } from "
 
 /**
  * One row for each polymer and colour that holds something. Runs hold the same materials, so the sum goes
- * over lots only. Reserved is zero until reservations exist.
+ * over lots only. A promise that its lot no longer covers is reserved no further than the lot holds.
  */
 export const CELLS_SQL = `
-  select r.polymer, r.colour_code as colourCode, sum(b.grams) as grams, 0 as reservedGrams, count(*) as lots
+  select r.polymer, r.colour_code as colourCode, sum(b.grams) as grams, count(*) as lots,
+         sum(min(b.grams, coalesce((select sum(v.grams) from reservations v
+                                     where v.lot_id = l.id and v.state = 'held'), 0))) as reservedGrams
     from balances b
     join lots l on l.holder_id = b.holder_id
     join materials m on m.id = b.material_id

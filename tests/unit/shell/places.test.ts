@@ -15,6 +15,8 @@ describe("who finds what in the navigation", () => {
       "weigh-in",
       "sorting",
       "stock",
+      "runs",
+      "catalogue",
       "removals",
       "scales",
       "account",
@@ -27,6 +29,8 @@ describe("who finds what in the navigation", () => {
       "weigh-in",
       "sorting",
       "stock",
+      "runs",
+      "catalogue",
       "steps",
       "counts",
       "removals",
@@ -37,7 +41,7 @@ describe("who finds what in the navigation", () => {
   });
 
   test("a coordinator finds every place", () => {
-    expect(placesFor("coordinator")).toHaveLength(16);
+    expect(placesFor("coordinator")).toHaveLength(18);
   });
 
   test.each(ROLES)("the bottom bar of a %s has at most four places and loses none", (role) => {

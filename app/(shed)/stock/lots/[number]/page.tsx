@@ -40,6 +40,7 @@ export default async function LotRoute({
         identify: may(ctx, "stock.identify"),
         move: may(ctx, "stock.move"),
         step: may(ctx, "steps.record"),
+        remove: may(ctx, "removals.record"),
         correct: may(ctx, "stock.review"),
       }}
       helperId={requirePerson(ctx)}

@@ -1,0 +1,182 @@
+"use client";
+
+import { useRouter } from "next/navigation";
+import { useState } from "react";
+import { useCommand } from "@/components/forms/use-command";
+import { ListSection } from "@/components/scales/list-section";
+import { Button } from "@/components/ui/button";
+import { DataTable, type Column } from "@/components/ui/data-table";
+import { EmptyState } from "@/components/ui/empty-state";
+import { formatMeasure } from "@/lib/core/measure";
+import { retireToolEndpoint, type Piece, type Tool } from "@/lib/production/contract/catalogue";
+import { CatalogueRetireDialog } from "./catalogue-retire-dialog";
+import { CatalogueRowActions } from "./catalogue-row-actions";
+import { CatalogueToolDialog } from "./catalogue-tool-dialog";
+import { countWords, gramsOf } from "./catalogue-words";
+
+type Props = {
+  /** Those in use. */
+  tools: readonly Tool[];
+  /** All of them: a tool may name one that is retired. */
+  pieces: readonly Piece[];
+  mayEdit: boolean;
+};
+type Open = { what: "edit"; tool: Tool | null } | { what: "retire"; tool: Tool };
+
+/** The moulds, from the first prototype to the one that makes several at once. */
+export function CatalogueTools({ tools, pieces, mayEdit }: Props) {
+  const router = useRouter();
+  const [open, setOpen] = useState<Open | null>(null);
+  const retire = useCommand(retireToolEndpoint);
+  const close = () => {
+    retire.reset();
+    setOpen(null);
+  };
+  const saved = () => {
+    close();
+    router.refresh();
+  };
+  const moulded = pieces.filter(
+    ({ method, retiredAt }) => method === "moulding" && retiredAt === null,
+  );
+  const columns: Column<Tool>[] = [
+    {
+      key: "name",
+      header: "Tool",
+      head: true,
+      cell: ({ name }) => <span className="block min-w-32 wrap-anywhere">{name}</span>,
+    },
+    { key: "piece", header: "Makes", cell: ({ pieceId }) => pieceCell(pieces, pieceId) },
+    {
+      key: "cavities",
+      header: "Cavities",
+      cell: ({ cavities, gates }) => (
+        <>
+          <span className="font-mono">{cavities}</span>
+          <span className="block text-sm whitespace-nowrap text-soft">
+            {gates} {gates === 1 ? "gate" : "gates"}
+          </span>
+        </>
+      ),
+    },
+    {
+      key: "runner",
+      header: "Sprue and runners, g",
+      align: "figure",
+      cell: ({ runnerMilligrams }) => gramsOf(runnerMilligrams),
+    },
+    {
+      key: "start",
+      header: "Start-up",
+      cell: ({ startUpShots, goodThousandths, preheatMinutes }) => (
+        <>
+          {startUpShots} {startUpShots === 1 ? "shot" : "shots"}
+          {preheatMinutes === 0 ? "" : `, ${preheatMinutes} min preheat`}
+          <span className="block text-sm whitespace-nowrap text-soft">
+            {formatMeasure(goodThousandths, "share")} % good
+          </span>
+        </>
+      ),
+    },
+    {
+      key: "shots",
+      header: "Shots before",
+      align: "figure",
+      cell: ({ shotsBefore }) => countWords(shotsBefore),
+    },
+    { key: "service", header: "Service due", cell: serviceCell },
+    {
+      key: "cost",
+      header: "Cost",
+      align: "figure",
+      cell: ({ costCents }) => formatMeasure(costCents, "money"),
+    },
+  ];
+  if (mayEdit) {
+    columns.push({
+      key: "actions",
+      header: <span className="sr-only">Actions</span>,
+      cell: (tool) => (
+        <CatalogueRowActions
+          name={tool.name}
+          onChange={() => setOpen({ what: "edit", tool })}
+          onRetire={() => setOpen({ what: "retire", tool })}
+        />
+      ),
+    });
+  }
+  const addButton =
+    mayEdit && moulded.length > 0 ? (
+      <Button size="small" variant="quiet" onClick={() => setOpen({ what: "edit", tool: null })}>
+        Add a tool
+      </Button>
+    ) : null;
+  const choices =
+    open?.what === "edit" && open.tool
+      ? [...moulded, ...pieces.filter(({ id }) => id === open.tool?.pieceId && !hasId(moulded, id))]
+      : moulded;
+  return (
+    <ListSection title="Tools" action={tools.length > 0 ? addButton : null}>
+      <DataTable
+        caption="Tools"
+        columns={columns}
+        rows={tools}
+        rowKey={({ id }) => id}
+        empty={
+          <EmptyState title="No tool yet" as="h3" action={addButton} seed={23}>
+            {!mayEdit
+              ? "A lead enters the moulds."
+              : moulded.length === 0
+                ? "A tool is the mould of a piece. Add a moulded piece first; pressing and cutting need none."
+                : "Add the mould of a piece: a first prototype with one cavity and one gate will do. Shots and time are worked out from it."}
+          </EmptyState>
+        }
+      />
+      {open?.what === "edit" ? (
+        <CatalogueToolDialog tool={open.tool} pieces={choices} onClose={close} onSaved={saved} />
+      ) : null}
+      {open?.what === "retire" ? (
+        <CatalogueRetireDialog
+          name={open.tool.name}
+          meaning="No new run can be planned with it. Its runs and its shots stay in the book."
+          command={retire}
+          onClose={close}
+          onRetire={() => {
+            void retire.send({ toolId: open.tool.id }).then(({ kind }) => {
+              if (kind === "done") saved();
+            });
+          }}
+        />
+      ) : null}
+    </ListSection>
+  );
+}
+
+const hasId = (pieces: readonly Piece[], id: string): boolean =>
+  pieces.some((piece) => piece.id === id);
+
+function pieceCell(pieces: readonly Piece[], pieceId: string) {
+  const piece = pieces.find(({ id }) => id === pieceId);
+  if (!piece) return "–";
+  return (
+    <span className="block min-w-24 wrap-anywhere">
+      {piece.name}
+      {piece.retiredAt === null ? "" : ", retired"}
+    </span>
+  );
+}
+
+function serviceCell({ serviceAtShots, shotsBefore }: Tool) {
+  if (serviceAtShots === null) return <span className="text-soft">not counted</span>;
+  const left = serviceAtShots - shotsBefore;
+  return (
+    <>
+      <span className="whitespace-nowrap">at {countWords(serviceAtShots)}</span>
+      {left <= 0 ? (
+        <strong className="block text-sm text-warn">due now</strong>
+      ) : (
+        <span className="block text-sm whitespace-nowrap text-soft">{countWords(left)} left</span>
+      )}
+    </>
+  );
+}

@@ -67,8 +67,9 @@ export function RunSheet({ page, symbol }: Props) {
             role="img"
             aria-label={`QR symbol of run ${run.number}`}
             viewBox={`${-QUIET_MODULES} ${-QUIET_MODULES} ${side} ${side}`}
-            className="block h-auto w-[38mm] bg-white"
+            className="block h-auto w-[38mm]"
           >
+            <rect x={-QUIET_MODULES} y={-QUIET_MODULES} width={side} height={side} fill="#fff" />
             <path d={symbol.path} fillRule="evenodd" fill="#000" />
           </svg>
           <figcaption className="mt-1 font-mono font-bold">{formatCode(page.labelCode)}</figcaption>

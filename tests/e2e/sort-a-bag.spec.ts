@@ -104,7 +104,7 @@ test("keeps the piles when the server is gone, and saves them when it is back", 
   await addPile(page, "Green", "1");
   await server.stop();
   await save(page).click();
-  await expect(page.getByText("Not saved: the server did not answer")).toBeVisible();
+  await expect(page.getByRole("alert").getByText("The server did not answer")).toBeVisible();
   await server.start();
   await save(page).click();
   await expect(page.getByText("Sorted by")).toBeVisible();

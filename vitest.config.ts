@@ -19,6 +19,8 @@ export default defineConfig({
         testTimeout: 60_000,
         hookTimeout: 60_000,
         env: { TZ: "UTC" },
+        // A process for each of seventy files costs more than all their tests; rules have no state to keep apart.
+        isolate: name !== "unit",
       },
     })),
   },

@@ -1,5 +1,6 @@
+import { seedOf } from "@/lib/core/random";
 import type { ReactNode } from "react";
-import { seedOf } from "@/components/ui/flake-shapes";
+
 import { Flakes } from "@/components/ui/flakes";
 
 type FlakeCardProps = {

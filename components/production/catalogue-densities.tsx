@@ -4,7 +4,7 @@ import { useRouter } from "next/navigation";
 import { useState } from "react";
 import { CommandNotice } from "@/components/forms/command-notice";
 import { useCommand } from "@/components/forms/use-command";
-import { ListSection } from "@/components/scales/list-section";
+import { ListSection } from "@/components/ui/list-section";
 import { Button } from "@/components/ui/button";
 import { DataTable, type Column } from "@/components/ui/data-table";
 import { setDensityEndpoint, type Density } from "@/lib/production/contract/catalogue";

@@ -2,36 +2,40 @@
 
 import { useRouter } from "next/navigation";
 import { useState } from "react";
+import { CommandNotice } from "@/components/forms/command-notice";
 import { useCommand } from "@/components/forms/use-command";
-import { ListSection } from "@/components/scales/list-section";
 import { Button } from "@/components/ui/button";
+import { Cautions } from "@/components/ui/cautions";
 import { DataTable, type Column } from "@/components/ui/data-table";
 import { EmptyState } from "@/components/ui/empty-state";
+import { ListSection } from "@/components/ui/list-section";
+import { RowActions } from "@/components/ui/row-actions";
 import { formatMeasure } from "@/lib/core/measure";
-import { retireMachineEndpoint, type Machine } from "@/lib/production/contract/catalogue";
+import { type Machine } from "@/lib/production/contract/catalogue";
+import { restoreMachineEndpoint, retireMachineEndpoint } from "@/lib/production/contract/retiring";
+import { WORKSHOP_CAUTIONS } from "@/lib/production/rules/cautions";
 import { CEILING_CELSIUS, HEATABLE, METHOD_NAMES } from "@/lib/production/terms";
 import { CatalogueMachineDialog } from "./catalogue-machine-dialog";
-import { CatalogueRetireDialog } from "./catalogue-retire-dialog";
-import { CatalogueRowActions } from "./catalogue-row-actions";
 import { countWords, exactTime, gramsOf, polymerName } from "./catalogue-words";
-import { CatalogueCautions } from "./catalogue-cautions";
 
 type Props = {
-  /** Those in use. */
+  /** For who may edit, the retired ones too, last. */
   machines: readonly Machine[];
   mayEdit: boolean;
 };
-type Open = { what: "edit"; machine: Machine | null } | { what: "retire"; machine: Machine };
+type Open = { what: "edit"; machine: Machine | null };
 
 /** Press, moulding machine, saw: what they take, how long it lasts, and what they are set to. */
 export function CatalogueMachines({ machines, mayEdit }: Props) {
   const router = useRouter();
   const [open, setOpen] = useState<Open | null>(null);
   const retire = useCommand(retireMachineEndpoint);
-  const close = () => {
-    retire.reset();
-    setOpen(null);
+  const restore = useCommand(restoreMachineEndpoint);
+  const setRetired = async ({ id }: Machine, retired: boolean) => {
+    const result = await (retired ? retire : restore).send({ machineId: id });
+    if (result.kind === "done") router.refresh();
   };
+  const close = () => setOpen(null);
   const saved = () => {
     close();
     router.refresh();
@@ -63,10 +67,12 @@ export function CatalogueMachines({ machines, mayEdit }: Props) {
       key: "actions",
       header: <span className="sr-only">Actions</span>,
       cell: (machine) => (
-        <CatalogueRowActions
+        <RowActions
           name={machine.name}
           onChange={() => setOpen({ what: "edit", machine })}
-          onRetire={() => setOpen({ what: "retire", machine })}
+          retired={machine.retiredAt !== null}
+          busy={retire.pending || restore.pending}
+          onRetire={(retired) => void setRetired(machine, retired)}
         />
       ),
     });
@@ -78,6 +84,8 @@ export function CatalogueMachines({ machines, mayEdit }: Props) {
   ) : null;
   return (
     <ListSection title="Machines" action={machines.length > 0 ? addButton : null}>
+      <CommandNotice command={retire} />
+      <CommandNotice command={restore} />
       <DataTable
         caption="Machines"
         columns={columns}
@@ -91,22 +99,9 @@ export function CatalogueMachines({ machines, mayEdit }: Props) {
           </EmptyState>
         }
       />
-      <CatalogueCautions />
+      <Cautions lines={WORKSHOP_CAUTIONS} />
       {open?.what === "edit" ? (
         <CatalogueMachineDialog machine={open.machine} onClose={close} onSaved={saved} />
-      ) : null}
-      {open?.what === "retire" ? (
-        <CatalogueRetireDialog
-          name={open.machine.name}
-          meaning="No new run can be planned on it. Its runs stay in the book."
-          command={retire}
-          onClose={close}
-          onRetire={() => {
-            void retire.send({ machineId: open.machine.id }).then(({ kind }) => {
-              if (kind === "done") saved();
-            });
-          }}
-        />
       ) : null}
     </ListSection>
   );

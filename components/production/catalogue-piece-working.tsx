@@ -2,8 +2,8 @@ import { useWatch, type Control } from "react-hook-form";
 import { formatMeasure, measureSchema, type Quantity } from "@/lib/core/measure";
 import type { Density, PieceData } from "@/lib/production/contract/catalogue";
 import { massOf, sheetVolume } from "@/lib/production/rules/feedstock";
-import { inGrams } from "@/lib/production/rules/working";
-import { polymerName, sheetWords } from "./catalogue-words";
+import { inGrams, sheetWords } from "@/lib/production/rules/working";
+import { polymerName } from "./catalogue-words";
 import type { PieceTyped } from "./catalogue-piece-typed";
 
 type Props = {

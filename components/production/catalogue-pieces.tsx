@@ -2,40 +2,43 @@
 
 import { useRouter } from "next/navigation";
 import { useState } from "react";
+import { CommandNotice } from "@/components/forms/command-notice";
 import { useCommand } from "@/components/forms/use-command";
-import { ListSection } from "@/components/scales/list-section";
 import { Button } from "@/components/ui/button";
 import { DataTable, type Column } from "@/components/ui/data-table";
 import { EmptyState } from "@/components/ui/empty-state";
+import { ListSection } from "@/components/ui/list-section";
+import { RowActions } from "@/components/ui/row-actions";
 import { formatMeasure } from "@/lib/core/measure";
 import { KIND_NAMES, KINDS } from "@/lib/core/plastics";
-import { retirePieceEndpoint, type Density, type Piece } from "@/lib/production/contract/catalogue";
+import { type Density, type Piece } from "@/lib/production/contract/catalogue";
+import { restorePieceEndpoint, retirePieceEndpoint } from "@/lib/production/contract/retiring";
 import { pieceMass } from "@/lib/production/rules/plan";
-import { inGrams } from "@/lib/production/rules/working";
+import { inGrams, sheetWords } from "@/lib/production/rules/working";
 import { HEATABLE, METHOD_NAMES } from "@/lib/production/terms";
 import { CataloguePieceDialog } from "./catalogue-piece-dialog";
-import { CatalogueRetireDialog } from "./catalogue-retire-dialog";
-import { CatalogueRowActions } from "./catalogue-row-actions";
 import { CatalogueWeighDialog } from "./catalogue-weigh-dialog";
-import { gramsOf, pieceSheet, polymerName, sheetWords } from "./catalogue-words";
+import { gramsOf, pieceSheet, polymerName } from "./catalogue-words";
 
 type Props = {
-  /** Those in use. */
+  /** For who may edit, the retired ones too, last. */
   pieces: readonly Piece[];
   densities: readonly Density[];
   mayEdit: boolean;
 };
-type Open = { what: "edit"; piece: Piece | null } | { what: "weigh" | "retire"; piece: Piece };
+type Open = { what: "edit"; piece: Piece | null } | { what: "weigh"; piece: Piece };
 
 /** What the workshop makes. */
 export function CataloguePieces({ pieces, densities, mayEdit }: Props) {
   const router = useRouter();
   const [open, setOpen] = useState<Open | null>(null);
   const retire = useCommand(retirePieceEndpoint);
-  const close = () => {
-    retire.reset();
-    setOpen(null);
+  const restore = useCommand(restorePieceEndpoint);
+  const setRetired = async ({ id }: Piece, retired: boolean) => {
+    const result = await (retired ? retire : restore).send({ pieceId: id });
+    if (result.kind === "done") router.refresh();
   };
+  const close = () => setOpen(null);
   const saved = () => {
     close();
     router.refresh();
@@ -101,10 +104,12 @@ export function CataloguePieces({ pieces, densities, mayEdit }: Props) {
       key: "actions",
       header: <span className="sr-only">Actions</span>,
       cell: (piece) => (
-        <CatalogueRowActions
+        <RowActions
           name={piece.name}
           onChange={() => setOpen({ what: "edit", piece })}
-          onRetire={() => setOpen({ what: "retire", piece })}
+          retired={piece.retiredAt !== null}
+          busy={retire.pending || restore.pending}
+          onRetire={(retired) => void setRetired(piece, retired)}
         >
           <Button
             variant="link"
@@ -114,7 +119,7 @@ export function CataloguePieces({ pieces, densities, mayEdit }: Props) {
           >
             Weigh
           </Button>
-        </CatalogueRowActions>
+        </RowActions>
       ),
     });
   }
@@ -125,6 +130,8 @@ export function CataloguePieces({ pieces, densities, mayEdit }: Props) {
   );
   return (
     <ListSection title="Pieces" action={mayEdit && pieces.length > 0 ? addButton("quiet") : null}>
+      <CommandNotice command={retire} />
+      <CommandNotice command={restore} />
       <DataTable
         caption="Pieces"
         columns={columns}
@@ -157,19 +164,6 @@ export function CataloguePieces({ pieces, densities, mayEdit }: Props) {
           now={massOfOne(open.piece, densities)}
           onClose={close}
           onSaved={saved}
-        />
-      ) : null}
-      {open?.what === "retire" ? (
-        <CatalogueRetireDialog
-          name={open.piece.name}
-          meaning="No new run can be planned for it. Its runs, its batches and what is on hand stay as they are."
-          command={retire}
-          onClose={close}
-          onRetire={() => {
-            void retire.send({ pieceId: open.piece.id }).then(({ kind }) => {
-              if (kind === "done") saved();
-            });
-          }}
         />
       ) : null}
     </ListSection>

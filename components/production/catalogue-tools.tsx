@@ -2,36 +2,39 @@
 
 import { useRouter } from "next/navigation";
 import { useState } from "react";
+import { CommandNotice } from "@/components/forms/command-notice";
 import { useCommand } from "@/components/forms/use-command";
-import { ListSection } from "@/components/scales/list-section";
 import { Button } from "@/components/ui/button";
 import { DataTable, type Column } from "@/components/ui/data-table";
 import { EmptyState } from "@/components/ui/empty-state";
+import { ListSection } from "@/components/ui/list-section";
+import { RowActions } from "@/components/ui/row-actions";
 import { formatMeasure } from "@/lib/core/measure";
-import { retireToolEndpoint, type Piece, type Tool } from "@/lib/production/contract/catalogue";
-import { CatalogueRetireDialog } from "./catalogue-retire-dialog";
-import { CatalogueRowActions } from "./catalogue-row-actions";
+import { type Piece, type Tool } from "@/lib/production/contract/catalogue";
+import { restoreToolEndpoint, retireToolEndpoint } from "@/lib/production/contract/retiring";
 import { CatalogueToolDialog } from "./catalogue-tool-dialog";
 import { countWords, gramsOf } from "./catalogue-words";
 
 type Props = {
-  /** Those in use. */
+  /** For who may edit, the retired ones too, last. */
   tools: readonly Tool[];
   /** All of them: a tool may name one that is retired. */
   pieces: readonly Piece[];
   mayEdit: boolean;
 };
-type Open = { what: "edit"; tool: Tool | null } | { what: "retire"; tool: Tool };
+type Open = { what: "edit"; tool: Tool | null };
 
 /** The moulds, from the first prototype to the one that makes several at once. */
 export function CatalogueTools({ tools, pieces, mayEdit }: Props) {
   const router = useRouter();
   const [open, setOpen] = useState<Open | null>(null);
   const retire = useCommand(retireToolEndpoint);
-  const close = () => {
-    retire.reset();
-    setOpen(null);
+  const restore = useCommand(restoreToolEndpoint);
+  const setRetired = async ({ id }: Tool, retired: boolean) => {
+    const result = await (retired ? retire : restore).send({ toolId: id });
+    if (result.kind === "done") router.refresh();
   };
+  const close = () => setOpen(null);
   const saved = () => {
     close();
     router.refresh();
@@ -97,10 +100,12 @@ export function CatalogueTools({ tools, pieces, mayEdit }: Props) {
       key: "actions",
       header: <span className="sr-only">Actions</span>,
       cell: (tool) => (
-        <CatalogueRowActions
+        <RowActions
           name={tool.name}
           onChange={() => setOpen({ what: "edit", tool })}
-          onRetire={() => setOpen({ what: "retire", tool })}
+          retired={tool.retiredAt !== null}
+          busy={retire.pending || restore.pending}
+          onRetire={(retired) => void setRetired(tool, retired)}
         />
       ),
     });
@@ -117,6 +122,8 @@ export function CatalogueTools({ tools, pieces, mayEdit }: Props) {
       : moulded;
   return (
     <ListSection title="Tools" action={tools.length > 0 ? addButton : null}>
+      <CommandNotice command={retire} />
+      <CommandNotice command={restore} />
       <DataTable
         caption="Tools"
         columns={columns}
@@ -134,19 +141,6 @@ export function CatalogueTools({ tools, pieces, mayEdit }: Props) {
       />
       {open?.what === "edit" ? (
         <CatalogueToolDialog tool={open.tool} pieces={choices} onClose={close} onSaved={saved} />
-      ) : null}
-      {open?.what === "retire" ? (
-        <CatalogueRetireDialog
-          name={open.tool.name}
-          meaning="No new run can be planned with it. Its runs and its shots stay in the book."
-          command={retire}
-          onClose={close}
-          onRetire={() => {
-            void retire.send({ toolId: open.tool.id }).then(({ kind }) => {
-              if (kind === "done") saved();
-            });
-          }}
-        />
       ) : null}
     </ListSection>
   );

@@ -2,18 +2,12 @@
 import { formatMeasure } from "@/lib/core/measure";
 import { POLYMER_NAMES, type PolymerAnswer } from "@/lib/core/plastics";
 import type { Piece } from "@/lib/production/contract/catalogue";
+import type { SheetSize } from "@/lib/production/rules/feedstock";
 
 export const polymerName = (polymer: PolymerAnswer): string => POLYMER_NAMES[polymer].name;
 
-type Sides = { lengthUm: number; widthUm: number; thicknessUm: number };
-
-/** "200 × 250 × 3 mm" */
-export function sheetWords({ lengthUm, widthUm, thicknessUm }: Sides): string {
-  return `${[lengthUm, widthUm, thicknessUm].map((side) => formatMeasure(side, "length")).join(" × ")} mm`;
-}
-
 /** The sheet that a piece is, or is cut from; null for a moulded one. */
-export function pieceSheet({ lengthUm, widthUm, thicknessUm }: Piece): Sides | null {
+export function pieceSheet({ lengthUm, widthUm, thicknessUm }: Piece): SheetSize | null {
   return lengthUm === null || widthUm === null || thicknessUm === null
     ? null
     : { lengthUm, widthUm, thicknessUm };

@@ -22,12 +22,12 @@ type Props = { page: RunPage; mayPlan: boolean };
 export function RunRecord({ page, mayPlan }: Props) {
   const { run, tool, machine, piece, reservations } = page;
   const planned = run.state === "planned";
-  const with_ = [tool?.name, machine?.name].filter(Boolean).join(", ");
+  const makers = [tool?.name, machine?.name].filter(Boolean).join(", ");
   return (
     <>
       <PageHeader
         title={runTitle(run)}
-        lead={`Run ${run.number}, ${RUN_STATE_NAMES[run.state].toLowerCase()}. ${POLYMER_NAMES[run.polymer].name}${with_ ? `, ${with_}` : ""}.`}
+        lead={`Run ${run.number}, ${RUN_STATE_NAMES[run.state].toLowerCase()}. ${POLYMER_NAMES[run.polymer].name}${makers ? `, ${makers}` : ""}.`}
         back={{ href: "/runs", label: "Runs" }}
         figures={
           <>

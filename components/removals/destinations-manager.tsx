@@ -15,7 +15,7 @@ import {
 } from "@/lib/removals/contract/destinations";
 import { permitState } from "@/lib/removals/rules";
 import { ROUTE_NAMES } from "@/lib/removals/terms";
-import { RowActions } from "../scales/row-actions";
+import { RowActions } from "@/components/ui/row-actions";
 import { DestinationDialog } from "./destination-dialog";
 
 type Props = { destinations: readonly Destination[]; today: Day };

@@ -14,8 +14,8 @@ import {
   type CheckWeight,
 } from "@/lib/scales/contract/checks";
 import { CheckWeightDialog } from "./check-weight-dialog";
-import { ListSection } from "./list-section";
-import { RowActions } from "./row-actions";
+import { ListSection } from "@/components/ui/list-section";
+import { RowActions } from "@/components/ui/row-actions";
 
 /** Objects of known mass with which the scales are checked. */
 export function CheckWeightsSection({ weights }: { weights: readonly CheckWeight[] }) {

@@ -19,8 +19,8 @@ import type { ScaleReceipt } from "@/lib/scales/contract/scales";
 import type { Tare } from "@/lib/scales/queries/tares";
 import { TARE_KIND_NAMES } from "@/lib/scales/terms";
 import { ContainerDialog } from "./container-dialog";
-import { ListSection } from "./list-section";
-import { RowActions } from "./row-actions";
+import { ListSection } from "@/components/ui/list-section";
+import { RowActions } from "@/components/ui/row-actions";
 import { TareDialog } from "./tare-dialog";
 
 type Props = {

@@ -14,8 +14,8 @@ import {
   type ScaleReceipt,
 } from "@/lib/scales/contract/scales";
 import { SCALE_CLASS_NAMES } from "@/lib/scales/terms";
-import { ListSection } from "./list-section";
-import { RowActions } from "./row-actions";
+import { ListSection } from "@/components/ui/list-section";
+import { RowActions } from "@/components/ui/row-actions";
 import { ScaleDialog } from "./scale-dialog";
 
 /** The scheme's scales: what stands on their plates. */

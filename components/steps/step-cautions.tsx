@@ -1,4 +1,4 @@
-import { Notice } from "@/components/ui/notice";
+import { Cautions } from "@/components/ui/cautions";
 import type { PolymerAnswer } from "@/lib/core/plastics";
 import type { StepKind } from "@/lib/stock/terms";
 
@@ -29,16 +29,5 @@ export function StepCautions({ kind, polymer }: { kind: StepKind; polymer: Polym
         : UNKNOWN.includes(polymer)
           ? "Nobody knows what this is. Shredded it can no longer be told apart, and it can never be heated; identify it first if that is possible."
           : null;
-  return (
-    <Notice tone="warn" title="Take care">
-      <ul className="list-inside list-disc">
-        {[...(extra ? [extra] : []), ...CAUTIONS[kind]].map((line) => (
-          <li key={line}>{line}</li>
-        ))}
-      </ul>
-      <p className="mt-1 text-sm text-soft">
-        The machine&apos;s manual and local rules come before this page.
-      </p>
-    </Notice>
-  );
+  return <Cautions lines={[...(extra ? [extra] : []), ...CAUTIONS[kind]]} />;
 }

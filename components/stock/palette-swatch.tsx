@@ -1,4 +1,4 @@
-import { seedOf } from "@/components/ui/flake-shapes";
+import { seedOf } from "@/lib/core/random";
 import { SwatchPaint } from "@/components/ui/swatch-paint";
 import type { ColourLook } from "@/lib/stock/terms";
 import { PATTERNS } from "./patterns";

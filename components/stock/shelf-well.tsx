@@ -1,3 +1,4 @@
+import { seedOf } from "@/lib/core/random";
 import Link from "next/link";
 import { StockWell } from "@/components/ui/stock-well";
 import type { PolymerAnswer } from "@/lib/core/plastics";
@@ -14,13 +15,6 @@ type Props = {
   filter: StockFilter;
   className?: string;
 };
-
-/** A number from a text, so that the same well always has the same chips. */
-function seedOf(text: string): number {
-  let seed = 7;
-  for (const symbol of text) seed = (seed * 31 + symbol.charCodeAt(0)) % 9973;
-  return seed;
-}
 
 /** One polymer in one colour; leads to its lots. */
 export function ShelfWell({ polymer, colour, cell, fullestGrams, filter, className }: Props) {

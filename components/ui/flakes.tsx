@@ -1,6 +1,7 @@
 "use client";
 
-import { chipPath, randomFrom } from "./flake-shapes";
+import { randomFrom } from "@/lib/core/random";
+import { chipPath } from "./flake-shapes";
 
 const FILLS = [
   "fill-flake-blue",

@@ -1,4 +1,5 @@
-import { chipPath, hatchPath, randomFrom } from "./flake-shapes";
+import { randomFrom } from "@/lib/core/random";
+import { chipPath, hatchPath } from "./flake-shapes";
 
 /** How a colour is shown: plain chips of it, several colours, see-through, or what is turned away. */
 export type SwatchPattern = "plain" | "mixed" | "clear" | "reject";

@@ -1,4 +1,6 @@
-/** A small seeded generator, so that the demo is the same every time (mulberry32; good enough for a story). */
+/** A small seeded generator, so that the demo is the same every time; good enough for a story. */
+import { randomFrom } from "@/lib/core/random";
+
 export type Random = {
   /** From 0 up to, not including, 1. */
   next: () => number;
@@ -14,14 +16,7 @@ export type Random = {
 };
 
 export function seeded(seed: number): Random {
-  let state = seed >>> 0;
-  const next = (): number => {
-    state = (state + 0x6d2b79f5) >>> 0;
-    let t = state;
-    t = Math.imul(t ^ (t >>> 15), t | 1);
-    t ^= t + Math.imul(t ^ (t >>> 7), t | 61);
-    return ((t ^ (t >>> 14)) >>> 0) / 4294967296;
-  };
+  const next = randomFrom(seed);
   const int = (below: number): number => Math.floor(next() * below);
   return {
     next,

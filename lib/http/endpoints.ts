@@ -11,6 +11,7 @@ import * as points from "@/lib/points/contract";
 import * as catalogue from "@/lib/production/contract/catalogue";
 import * as plans from "@/lib/production/contract/plans";
 import * as reservations from "@/lib/production/contract/reservations";
+import * as retiring from "@/lib/production/contract/retiring";
 import * as destinations from "@/lib/removals/contract/destinations";
 import * as removalReceipts from "@/lib/removals/contract/receipts";
 import * as removals from "@/lib/removals/contract/removals";
@@ -51,6 +52,7 @@ const CONTRACTS: readonly Readonly<Record<string, unknown>>[] = [
   counts,
   moves,
   catalogue,
+  retiring,
   plans,
   reservations,
   steps,

@@ -4,7 +4,7 @@ import type * as z from "zod";
 import { recordAudit } from "@/lib/audit/commands";
 import { AppError } from "@/lib/core/errors";
 import { newId, type PointId } from "@/lib/core/ids";
-import { sameName, tidyName } from "@/lib/core/names";
+import { requireFreeName, tidyName } from "@/lib/core/names";
 import type { Instant } from "@/lib/core/time";
 import { allow, type Context } from "@/lib/platform/context";
 import { prepared, type Tx } from "@/lib/platform/database";
@@ -23,7 +23,7 @@ export function addPoint(ctx: Context, input: z.output<typeof addPointSchema>): 
   return once(ctx, "POST /api/points", input.requestId, (tx) => {
     const id = input.requestId as PointId;
     const name = tidyName(input.name);
-    requireFreeName(tx, name, null);
+    requireFreeName(namesOf(tx), name, null);
     prepared(
       tx.client,
       "insert into points (id, name, kind, created_at, closed_at) values (?, ?, ?, ?, null)",
@@ -49,7 +49,7 @@ export function changePoint(ctx: Context, input: z.output<typeof changePointSche
   return once(ctx, `PATCH /api/points/${input.pointId}`, input.requestId, (tx) => {
     const point = requireChangeable(tx, input.pointId);
     const name = tidyName(input.name);
-    requireFreeName(tx, name, point.id);
+    requireFreeName(namesOf(tx), name, point.id);
     prepared(tx.client, "update points set name = ?, kind = ? where id = ?").run(
       name,
       input.kind,
@@ -130,11 +130,5 @@ function requireChangeable(tx: Tx, pointId: PointId): Point {
   return point;
 }
 
-function requireFreeName(tx: Tx, name: string, except: PointId | null): void {
-  const others = prepared(tx.client, "select id, name from points").all() as Pick<
-    Point,
-    "id" | "name"
-  >[];
-  const taken = others.find((other) => other.id !== except && sameName(other.name, name));
-  if (taken) throw new AppError("name-in-use", { name: taken.name }, ["name"]);
-}
+const namesOf = (tx: Tx): { id: string; name: string }[] =>
+  prepared(tx.client, "select id, name from points").all() as { id: string; name: string }[];

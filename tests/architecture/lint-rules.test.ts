@@ -2,7 +2,7 @@
 import path from "node:path";
 import { ESLint } from "eslint";
 import { describe, expect, it } from "vitest";
-import { PROJECT } from "../support/planted-tree";
+import { PROJECT, plantTree, removeTree } from "../support/planted-tree";
 
 const ALWAYS_ERRORS = [
   "@typescript-eslint/no-explicit-any",
@@ -29,20 +29,22 @@ describe("lint rules", () => {
   });
 
   it("report any in a piece of code", async () => {
-    const strict = new ESLint({
-      cwd: PROJECT,
-      overrideConfig: {
-        languageOptions: { parserOptions: { projectService: { allowDefaultProject: ["*.ts"] } } },
-      },
+    // In a tree of its own: the types of the whole project are read by the lint step.
+    const root = plantTree({
+      "planted.ts": "export const loose: any = 1;\nasync function go() {}\ngo();\n",
     });
-    const [result] = await strict.lintText(
-      "export const loose: any = 1;\nasync function go() {}\ngo();\n",
-      {
-        filePath: path.join(PROJECT, "planted.ts"),
-      },
-    );
-    const rules = result?.messages.map((message) => message.ruleId);
-    expect(rules).toContain("@typescript-eslint/no-explicit-any");
-    expect(rules).toContain("@typescript-eslint/no-floating-promises");
+    try {
+      const strict = new ESLint({
+        cwd: root,
+        overrideConfigFile: path.join(PROJECT, "eslint.config.mjs"),
+        overrideConfig: { languageOptions: { parserOptions: { tsconfigRootDir: root } } },
+      });
+      const [result] = await strict.lintFiles(["planted.ts"]);
+      const rules = result?.messages.map((message) => message.ruleId);
+      expect(rules).toContain("@typescript-eslint/no-explicit-any");
+      expect(rules).toContain("@typescript-eslint/no-floating-promises");
+    } finally {
+      removeTree(root);
+    }
   });
 });

@@ -1,4 +1,9 @@
 /** One of each kind of thing that the workshop's catalogue holds. */
+import { newId } from "@/lib/core/ids";
+import { addMachine } from "@/lib/production/commands/machines";
+import { addPiece } from "@/lib/production/commands/pieces";
+import { addTool } from "@/lib/production/commands/tools";
+import { NOON, type TestScheme } from "./scheme";
 import type { Id } from "@/lib/core/ids";
 import type { MachineData, PieceData, ToolData } from "@/lib/production/contract/catalogue";
 
@@ -46,3 +51,18 @@ export const press: MachineData = {
   ratedWatts: 3_000,
   setPoints: [{ polymer: "PE-HD", celsius: 190 }],
 };
+
+export const asLead = (scheme: TestScheme, input: object) => scheme.ctx("lead", NOON, input);
+export function addedPiece(scheme: TestScheme, data: Partial<PieceData> = {}) {
+  const input = { requestId: newId(), ...coaster, ...data };
+  return addPiece(asLead(scheme, input), input);
+}
+export function addedTool(scheme: TestScheme, name = "Coaster mould") {
+  const { id } = addedPiece(scheme);
+  const input = { requestId: newId(), ...mould(id), name };
+  return addTool(asLead(scheme, input), input);
+}
+export function addedMachine(scheme: TestScheme, name = "Sheet press") {
+  const input = { requestId: newId(), ...press, name };
+  return addMachine(asLead(scheme, input), input);
+}

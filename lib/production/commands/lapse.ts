@@ -27,7 +27,8 @@ type Told = {
   address: string | null;
 };
 
-const RUNS = (condition: string) => `
+/** Runs with what they have reserved, of the reservations that the condition names. */
+const runsSql = (condition: string): string => `
   select u.id as runId, u.number, p.name as pieceName, sum(h.grams) as grams, sum(h.shortGrams) as shortGrams,
          min(h.lapsesAt) as lapsesAt, d.email as address
     from (${HELD_SQL}) h
@@ -45,7 +46,7 @@ const RUNS = (condition: string) => `
  */
 export function tendReservations(ctx: Context): { warned: number; short: number; lapsed: number } {
   return inTransaction(ctx, (tx) => {
-    const lapsed = read(tx, "h.lapsesAt <= @now", ctx);
+    const lapsed = read(tx, "h.lapsesAt <= @now", { now: ctx.now });
     for (const { runId, grams } of lapsed) {
       // Only what is due: the run may have reserved other lots later.
       prepared(
@@ -60,7 +61,9 @@ export function tendReservations(ctx: Context): { warned: number; short: number;
         fields: { grams },
       });
     }
-    const warned = read(tx, "v.warned_at is null and h.lapsesAt <= @now + @day", ctx);
+    const warned = read(tx, "v.warned_at is null and h.lapsesAt <= @soon", {
+      soon: ctx.now + DAY,
+    });
     tell(tx, ctx, warned, "warned_at", `lapses_at <= @now + ${DAY}`, lapseMail);
     // Covered again, it may turn short again and is told again.
     prepared(
@@ -73,7 +76,6 @@ export function tendReservations(ctx: Context): { warned: number; short: number;
       tx,
       `u.id in (select s.runId from (${HELD_SQL}) s join reservations t on t.id = s.id
                  where t.told_short_at is null and s.shortGrams > 0)`,
-      ctx,
     );
     const isShort = `id in (select id from (${HELD_SQL}) where shortGrams > 0)`;
     tell(tx, ctx, short, "told_short_at", isShort, shortMail);
@@ -81,10 +83,8 @@ export function tendReservations(ctx: Context): { warned: number; short: number;
   });
 }
 
-function read(tx: Tx, condition: string, ctx: Context): Told[] {
-  const statement = prepared(tx.client, RUNS(condition));
-  const values = { now: ctx.now, day: DAY };
-  return statement.all(condition.includes("@") ? values : {}) as Told[];
+function read(tx: Tx, condition: string, values: Readonly<Record<string, number>> = {}): Told[] {
+  return prepared(tx.client, runsSql(condition)).all(values) as Told[];
 }
 
 function tell(

@@ -4,7 +4,7 @@ import type * as z from "zod";
 import { recordAudit } from "@/lib/audit/commands";
 import { AppError } from "@/lib/core/errors";
 import type { Id } from "@/lib/core/ids";
-import { sameName, tidyName } from "@/lib/core/names";
+import { requireFreeName, tidyName } from "@/lib/core/names";
 import { allow, type Context } from "@/lib/platform/context";
 import { prepared, type Tx } from "@/lib/platform/database";
 import { once } from "@/lib/platform/receipts";
@@ -14,7 +14,6 @@ import type {
   Density,
   Machine,
   MachineData,
-  retireMachineEndpoint,
   setDensityEndpoint,
 } from "../contract/catalogue";
 import { getMachine, readDensities, readMachines } from "../queries/catalogue";
@@ -29,7 +28,7 @@ export function addMachine(
   allow(ctx, "production.catalogue");
   return once<Machine>(ctx, "POST /api/machines", input.requestId, (tx) => {
     const id = input.requestId as MachineId;
-    requireFreeName(tx, input.name, null);
+    requireFreeName(readMachines(tx), input.name, null);
     prepared(
       tx.client,
       `insert into machines (id, name, method, plate_length_um, plate_width_um, barrel_mm3, usable_thousandths,
@@ -50,7 +49,7 @@ export function changeMachine(
   allow(ctx, "production.catalogue");
   return once<Machine>(ctx, `PUT /api/machines/${input.machineId}`, input.requestId, (tx) => {
     const { id } = requireMachine(tx, input.machineId);
-    requireFreeName(tx, input.name, id);
+    requireFreeName(readMachines(tx), input.name, id);
     prepared(
       tx.client,
       `update machines set name = ?, method = ?, plate_length_um = ?, plate_width_um = ?, barrel_mm3 = ?,
@@ -60,27 +59,6 @@ export function changeMachine(
     insertSetPoints(tx, id, input);
     recordMachineAudit(tx, ctx, "machines.change", id, input);
     return requireMachine(tx, id);
-  });
-}
-
-/** @throws AppError `not-found` */
-export function retireMachine(
-  ctx: Context,
-  input: z.output<typeof retireMachineEndpoint.input>,
-): Machine {
-  allow(ctx, "production.catalogue");
-  const path = `POST /api/machines/${input.machineId}/retire`;
-  return once<Machine>(ctx, path, input.requestId, (tx) => {
-    const machine = requireMachine(tx, input.machineId);
-    if (machine.retiredAt !== null) return machine;
-    prepared(tx.client, "update machines set retired_at = ? where id = ?").run(ctx.now, machine.id);
-    recordAudit(tx, ctx, {
-      action: "machines.retire",
-      subjectKind: "machine",
-      subjectId: machine.id,
-      fields: {},
-    });
-    return { ...machine, retiredAt: ctx.now };
   });
 }
 
@@ -162,11 +140,4 @@ function requireMachine(tx: Tx, id: MachineId): Machine {
   const machine = getMachine(tx, id);
   if (!machine) throw new AppError("not-found");
   return machine;
-}
-
-function requireFreeName(tx: Tx, name: string, except: MachineId | null): void {
-  const taken = readMachines(tx).find(
-    (other) => other.id !== except && sameName(other.name, tidyName(name)),
-  );
-  if (taken) throw new AppError("name-in-use", { name: taken.name }, ["name"]);
 }

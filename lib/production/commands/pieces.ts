@@ -4,7 +4,7 @@ import type * as z from "zod";
 import { recordAudit } from "@/lib/audit/commands";
 import { AppError } from "@/lib/core/errors";
 import type { Id } from "@/lib/core/ids";
-import { sameName, tidyName } from "@/lib/core/names";
+import { requireFreeName, tidyName } from "@/lib/core/names";
 import { allow, type Context } from "@/lib/platform/context";
 import { prepared, type Tx } from "@/lib/platform/database";
 import { once } from "@/lib/platform/receipts";
@@ -13,7 +13,6 @@ import type {
   changePieceEndpoint,
   Piece,
   PieceData,
-  retirePieceEndpoint,
   weighPiecesEndpoint,
 } from "../contract/catalogue";
 import { getPiece, readPieces } from "../queries/catalogue";
@@ -25,7 +24,7 @@ export function addPiece(ctx: Context, input: z.output<typeof addPieceEndpoint.i
   allow(ctx, "production.catalogue");
   return once<Piece>(ctx, "POST /api/pieces", input.requestId, (tx) => {
     const id = input.requestId as PieceId;
-    requireFreeName(tx, input.name, null);
+    requireFreeName(readPieces(tx), input.name, null);
     const columns = columnsOf(input);
     prepared(
       tx.client,
@@ -48,7 +47,7 @@ export function changePiece(
   allow(ctx, "production.catalogue");
   return once<Piece>(ctx, `PUT /api/pieces/${input.pieceId}`, input.requestId, (tx) => {
     const before = requirePiece(tx, input.pieceId);
-    requireFreeName(tx, input.name, before.id);
+    requireFreeName(readPieces(tx), input.name, before.id);
     const columns = columnsOf(input);
     // What was weighed was another piece when method, size or mass change.
     const resized =
@@ -98,26 +97,6 @@ export function weighPieces(
       fields: { count, milligrams },
     });
     return requirePiece(tx, id);
-  });
-}
-
-/** @throws AppError `not-found` */
-export function retirePiece(
-  ctx: Context,
-  input: z.output<typeof retirePieceEndpoint.input>,
-): Piece {
-  allow(ctx, "production.catalogue");
-  return once<Piece>(ctx, `POST /api/pieces/${input.pieceId}/retire`, input.requestId, (tx) => {
-    const piece = requirePiece(tx, input.pieceId);
-    if (piece.retiredAt !== null) return piece;
-    prepared(tx.client, "update pieces set retired_at = ? where id = ?").run(ctx.now, piece.id);
-    recordAudit(tx, ctx, {
-      action: "pieces.retire",
-      subjectKind: "piece",
-      subjectId: piece.id,
-      fields: {},
-    });
-    return { ...piece, retiredAt: ctx.now };
   });
 }
 
@@ -178,11 +157,4 @@ function requirePiece(tx: Tx, id: PieceId): Piece {
   const piece = getPiece(tx, id);
   if (!piece) throw new AppError("not-found");
   return piece;
-}
-
-function requireFreeName(tx: Tx, name: string, except: PieceId | null): void {
-  const taken = readPieces(tx).find(
-    (other) => other.id !== except && sameName(other.name, tidyName(name)),
-  );
-  if (taken) throw new AppError("name-in-use", { name: taken.name }, ["name"]);
 }

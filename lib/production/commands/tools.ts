@@ -4,17 +4,11 @@ import type * as z from "zod";
 import { recordAudit } from "@/lib/audit/commands";
 import { AppError } from "@/lib/core/errors";
 import type { Id } from "@/lib/core/ids";
-import { sameName, tidyName } from "@/lib/core/names";
+import { requireFreeName, tidyName } from "@/lib/core/names";
 import { allow, type Context } from "@/lib/platform/context";
 import { prepared, type Tx } from "@/lib/platform/database";
 import { once } from "@/lib/platform/receipts";
-import type {
-  addToolEndpoint,
-  changeToolEndpoint,
-  retireToolEndpoint,
-  Tool,
-  ToolData,
-} from "../contract/catalogue";
+import type { addToolEndpoint, changeToolEndpoint, Tool, ToolData } from "../contract/catalogue";
 import { getPiece, getTool, readTools } from "../queries/catalogue";
 
 type ToolId = Id<"tool">;
@@ -49,23 +43,6 @@ export function changeTool(ctx: Context, input: z.output<typeof changeToolEndpoi
     ).run(...columnsOf(input), id);
     recordToolAudit(tx, ctx, "tools.change", id, input);
     return requireTool(tx, id);
-  });
-}
-
-/** @throws AppError `not-found` */
-export function retireTool(ctx: Context, input: z.output<typeof retireToolEndpoint.input>): Tool {
-  allow(ctx, "production.catalogue");
-  return once<Tool>(ctx, `POST /api/tools/${input.toolId}/retire`, input.requestId, (tx) => {
-    const tool = requireTool(tx, input.toolId);
-    if (tool.retiredAt !== null) return tool;
-    prepared(tx.client, "update tools set retired_at = ? where id = ?").run(ctx.now, tool.id);
-    recordAudit(tx, ctx, {
-      action: "tools.retire",
-      subjectKind: "tool",
-      subjectId: tool.id,
-      fields: {},
-    });
-    return { ...tool, retiredAt: ctx.now };
   });
 }
 
@@ -109,8 +86,5 @@ function requireTool(tx: Tx, id: ToolId): Tool {
 
 function requireGood(tx: Tx, { name, pieceId }: ToolData, except: ToolId | null): void {
   if (!getPiece(tx, pieceId)) throw new AppError("not-found", {}, ["pieceId"]);
-  const taken = readTools(tx).find(
-    (other) => other.id !== except && sameName(other.name, tidyName(name)),
-  );
-  if (taken) throw new AppError("name-in-use", { name: taken.name }, ["name"]);
+  requireFreeName(readTools(tx), name, except);
 }

@@ -203,14 +203,6 @@ export const weighPiecesEndpoint = endpoint({
   ),
   output: pieceSchema,
 });
-export const retirePieceEndpoint = endpoint({
-  method: "POST",
-  path: "/api/pieces/{pieceId}/retire",
-  summary: "Takes a piece out of the catalogue; its runs stay.",
-  permission: "production.catalogue",
-  input: z.object({ requestId: requestIdSchema, pieceId: idSchema<"piece">() }),
-  output: pieceSchema,
-});
 
 export const addToolEndpoint = endpoint({
   method: "POST",
@@ -226,14 +218,6 @@ export const changeToolEndpoint = endpoint({
   summary: "Changes a tool.",
   permission: "production.catalogue",
   input: toolDataSchema.extend({ requestId: requestIdSchema, toolId: idSchema<"tool">() }),
-  output: toolSchema,
-});
-export const retireToolEndpoint = endpoint({
-  method: "POST",
-  path: "/api/tools/{toolId}/retire",
-  summary: "Takes a tool out of the list; its runs stay.",
-  permission: "production.catalogue",
-  input: z.object({ requestId: requestIdSchema, toolId: idSchema<"tool">() }),
   output: toolSchema,
 });
 
@@ -253,14 +237,6 @@ export const changeMachineEndpoint = endpoint({
   input: machineDataSchema.and(
     z.object({ requestId: requestIdSchema, machineId: idSchema<"machine">() }),
   ),
-  output: machineSchema,
-});
-export const retireMachineEndpoint = endpoint({
-  method: "POST",
-  path: "/api/machines/{machineId}/retire",
-  summary: "Takes a machine out of the list; its runs stay.",
-  permission: "production.catalogue",
-  input: z.object({ requestId: requestIdSchema, machineId: idSchema<"machine">() }),
   output: machineSchema,
 });
 

@@ -17,8 +17,12 @@ const PAGE = 50;
 
 const SUMMARY = `u.id, u.number, u.state, p.name as pieceName, p.method, u.polymer, u.wanted_pieces as wantedPieces,
   u.need_grams as needGrams, u.planned_at as plannedAt, u.folded, u.seed,
-  (select coalesce(sum(h.grams), 0) from (${HELD_SQL}) h where h.runId = u.id) as reservedGrams,
-  (select coalesce(sum(h.shortGrams), 0) from (${HELD_SQL}) h where h.runId = u.id) as shortGrams`;
+  coalesce(h.grams, 0) as reservedGrams, coalesce(h.shortGrams, 0) as shortGrams`;
+
+/** A run with its piece and, where it has reserved something, the sums of that. */
+const RUNS = `runs u join pieces p on p.id = u.piece_id
+  left join (select runId, sum(grams) as grams, sum(shortGrams) as shortGrams from (${HELD_SQL}) group by runId) h
+    on h.runId = u.id`;
 
 function withColours(db: Readable, run: Omit<RunSummary, "colours">): RunSummary {
   const colours = prepared(
@@ -39,7 +43,7 @@ export function listRuns(
   return inSnapshot(ctx, (db) => {
     const found = prepared(
       db.client,
-      `select ${SUMMARY} from runs u join pieces p on p.id = u.piece_id
+      `select ${SUMMARY} from ${RUNS}
         where (@state is null or u.state = @state) and u.number < @after order by u.number desc limit ${PAGE + 1}`,
     ).all({ state: state ?? null, after: after ?? Number.MAX_SAFE_INTEGER }) as Omit<
       RunSummary,
@@ -87,7 +91,7 @@ export function getRunPage(ctx: Context, number: number): RunPage | null {
       `select ${SUMMARY}, u.piece_id as pieceId, u.tool_id as toolId, u.machine_id as machineId,
               u.planned_shots as plannedShots, u.planned_s as plannedSeconds, d.name as plannedByName,
               (select code from labels where kind = 'run' and subject = u.id order by made_at limit 1) as labelCode
-         from runs u join pieces p on p.id = u.piece_id join people d on d.id = u.planned_by
+         from ${RUNS} join people d on d.id = u.planned_by
         where u.number = ?`,
     ).get(number) as
       | (Omit<RunSummary, "colours"> & {

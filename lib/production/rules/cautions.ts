@@ -19,6 +19,13 @@ const BLADES = [
   "Cuttings and dust are collected and not washed away.",
 ] as const;
 
+/** Of a workshop with presses, barrels and saws, whatever is made. */
+export const WORKSHOP_CAUTIONS: readonly string[] = [
+  ...HEAT.slice(0, -1),
+  "Dry PET first. Never above a polymer's ceiling: there it gives off fumes and breaks down.",
+  ...BLADES,
+];
+
 /** The temperature line, where heat is used, and the cautions of a method. */
 export function cautionsFor(
   method: Method,

@@ -6,17 +6,7 @@
  * the more it is folded, the more and the thinner the stripes. Pixels sorted by the field are then dealt to the colours.
  */
 import { allocate } from "@/lib/core/allocate";
-
-/** mulberry32, as the program's other drawings use: seeded, uniform in [0, 1). */
-function randomFrom(seed: number): () => number {
-  let state = seed >>> 0;
-  return () => {
-    state = (state + 0x6d2b79f5) >>> 0;
-    let mixed = Math.imul(state ^ (state >>> 15), 1 | state);
-    mixed ^= mixed + Math.imul(mixed ^ (mixed >>> 7), 61 | mixed);
-    return ((mixed ^ (mixed >>> 14)) >>> 0) / 4_294_967_296;
-  };
-}
+import { randomFrom } from "@/lib/core/random";
 
 const LATTICE = 64;
 const smooth = (t: number): number => t * t * (3 - 2 * t);

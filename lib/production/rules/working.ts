@@ -25,7 +25,8 @@ const minutes = (seconds: number): string => `${Number((seconds / 60).toFixed(2)
 
 const perCm3 = (mg: number): string => `${formatMeasure(mg, "density")} g/cm³`;
 
-const sheetWords = (sheet: SheetSize): string =>
+/** "200 × 250 × 3 mm" */
+export const sheetWords = (sheet: SheetSize): string =>
   `${[sheet.lengthUm, sheet.widthUm, sheet.thicknessUm].map((um) => formatMeasure(um, "length")).join(" × ")} mm`;
 
 function sheetLine(sheet: SheetSize, mgPerCm3: number): string {

@@ -4,7 +4,7 @@ import type * as z from "zod";
 import { recordAudit } from "@/lib/audit/commands";
 import { AppError } from "@/lib/core/errors";
 import type { Id } from "@/lib/core/ids";
-import { sameName, tidyName } from "@/lib/core/names";
+import { requireFreeName, tidyName } from "@/lib/core/names";
 import type { Instant } from "@/lib/core/time";
 import { allow, type Context } from "@/lib/platform/context";
 import { prepared, type Tx } from "@/lib/platform/database";
@@ -29,7 +29,7 @@ export function addDestination(
   return once(ctx, "POST /api/destinations", input.requestId, (tx) => {
     const id = input.requestId as DestinationId;
     const name = tidyName(input.name);
-    requireFreeName(tx, name, null);
+    requireFreeName(readDestinations(tx), name, null);
     prepared(
       tx.client,
       `insert into destinations (id, name, route, receiver_number, carrier_name, carrier_number, permit_until,
@@ -53,7 +53,7 @@ export function changeDestination(
   return once(ctx, `PUT /api/destinations/${input.destinationId}`, input.requestId, (tx) => {
     const { id } = requireDestination(tx, input.destinationId);
     const name = tidyName(input.name);
-    requireFreeName(tx, name, id);
+    requireFreeName(readDestinations(tx), name, id);
     prepared(
       tx.client,
       `update destinations set name = ?, route = ?, receiver_number = ?, carrier_name = ?, carrier_number = ?,
@@ -141,11 +141,4 @@ function requireDestination(tx: Tx, id: DestinationId): Destination {
   const destination = getDestination(tx, id);
   if (!destination) throw new AppError("not-found");
   return destination;
-}
-
-function requireFreeName(tx: Tx, name: string, except: DestinationId | null): void {
-  const taken = readDestinations(tx).find(
-    (other) => other.id !== except && sameName(other.name, name),
-  );
-  if (taken) throw new AppError("name-in-use", { name: taken.name }, ["name"]);
 }

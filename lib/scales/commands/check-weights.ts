@@ -4,7 +4,7 @@ import type * as z from "zod";
 import { recordAudit } from "@/lib/audit/commands";
 import { AppError } from "@/lib/core/errors";
 import type { Id } from "@/lib/core/ids";
-import { sameName, tidyName } from "@/lib/core/names";
+import { requireFreeName, tidyName } from "@/lib/core/names";
 import type { Instant } from "@/lib/core/time";
 import { allow, type Context } from "@/lib/platform/context";
 import { prepared, type Tx } from "@/lib/platform/database";
@@ -30,8 +30,7 @@ export function addCheckWeight(
     const id = input.requestId as Id<"check-weight">;
     const { massMilligrams, evidence } = input;
     const name = tidyName(input.name);
-    const taken = readCheckWeights(tx).find((other) => sameName(other.name, name));
-    if (taken) throw new AppError("name-in-use", { name: taken.name }, ["name"]);
+    requireFreeName(readCheckWeights(tx), name);
     prepared(
       tx.client,
       `insert into check_weights (id, name, mass_mg, evidence, created_at, retired_at)

@@ -5,7 +5,7 @@ import { recordAudit } from "@/lib/audit/commands";
 import { makeLabelIn } from "@/lib/bags/commands/labels";
 import { AppError } from "@/lib/core/errors";
 import type { Id } from "@/lib/core/ids";
-import { sameName, tidyName } from "@/lib/core/names";
+import { requireFreeName, tidyName } from "@/lib/core/names";
 import type { Instant } from "@/lib/core/time";
 import { actorId, allow, type Context } from "@/lib/platform/context";
 import { prepared, type Tx } from "@/lib/platform/database";
@@ -37,7 +37,7 @@ export function addContainer(
     const id = input.requestId as ContainerId;
     const { kind, tareMilligrams } = input;
     const name = tidyName(input.name);
-    requireFreeName(tx, name, null);
+    requireFreeName(namesOf(tx), name, null);
     const labelCode = kind === "container" ? makeLabelIn(tx, "container", id, ctx.now) : null;
     prepared(
       tx.client,
@@ -71,7 +71,7 @@ export function changeContainer(
     const before = requireContainer(tx, input.containerId);
     const { tareMilligrams } = input;
     const name = tidyName(input.name);
-    requireFreeName(tx, name, before.id);
+    requireFreeName(namesOf(tx), name, before.id);
     prepared(tx.client, "update containers set name = ?, tare_mg = ? where id = ?").run(
       name,
       tareMilligrams,
@@ -192,11 +192,5 @@ function requireContainer(tx: Tx, containerId: ContainerId): Container {
   return container;
 }
 
-function requireFreeName(tx: Tx, name: string, except: ContainerId | null): void {
-  const others = prepared(tx.client, "select id, name from containers").all() as Pick<
-    Container,
-    "id" | "name"
-  >[];
-  const taken = others.find((other) => other.id !== except && sameName(other.name, name));
-  if (taken) throw new AppError("name-in-use", { name: taken.name }, ["name"]);
-}
+const namesOf = (tx: Tx): { id: string; name: string }[] =>
+  prepared(tx.client, "select id, name from containers").all() as { id: string; name: string }[];

@@ -4,7 +4,7 @@ import type * as z from "zod";
 import { recordAudit } from "@/lib/audit/commands";
 import { AppError } from "@/lib/core/errors";
 import type { ScaleId } from "@/lib/core/ids";
-import { sameName, tidyName } from "@/lib/core/names";
+import { requireFreeName, tidyName } from "@/lib/core/names";
 import type { Instant } from "@/lib/core/time";
 import { allow, type Context } from "@/lib/platform/context";
 import { prepared, type Tx } from "@/lib/platform/database";
@@ -33,7 +33,7 @@ export function addScale(ctx: Context, input: z.output<typeof addScaleSchema>): 
     const id = input.requestId as ScaleId;
     const name = tidyName(input.name);
     const spec = requireSound(input);
-    requireFreeName(tx, name, null);
+    requireFreeName(namesOf(tx), name, null);
     prepared(
       tx.client,
       `insert into scales (id, number, name, site_id, class, max_mg, e_mg, d_mg, stated_accuracy_mg,
@@ -56,7 +56,7 @@ export function changeScale(ctx: Context, input: z.output<typeof changeScaleSche
     const { id } = requireScale(tx, input.scaleId);
     const name = tidyName(input.name);
     const spec = requireSound(input);
-    requireFreeName(tx, name, id);
+    requireFreeName(namesOf(tx), name, id);
     prepared(
       tx.client,
       `update scales set name = ?, class = ?, max_mg = ?, e_mg = ?, d_mg = ?, stated_accuracy_mg = ?
@@ -148,11 +148,5 @@ function recordScaleAudit(
   });
 }
 
-function requireFreeName(tx: Tx, name: string, except: ScaleId | null): void {
-  const others = prepared(tx.client, "select id, name from scales").all() as Pick<
-    Scale,
-    "id" | "name"
-  >[];
-  const taken = others.find((other) => other.id !== except && sameName(other.name, name));
-  if (taken) throw new AppError("name-in-use", { name: taken.name }, ["name"]);
-}
+const namesOf = (tx: Tx): { id: string; name: string }[] =>
+  prepared(tx.client, "select id, name from scales").all() as { id: string; name: string }[];

@@ -1,4 +1,6 @@
 /** Numbers that look random and are the same for the same seed on every machine. */
+import { randomFrom, seedOf } from "@/lib/core/random";
+
 export type Random = {
   /** 0 up to, not including, 1. */
   next: () => number;
@@ -10,18 +12,9 @@ export type Random = {
   pick: <T>(from: readonly T[]) => T;
 };
 
-/** Mulberry32 over an FNV-1a hash of the seed's text. */
+/** The stream of a seed's text. */
 export function randomOf(seed: string): Random {
-  let state = 0x811c9dc5;
-  for (let at = 0; at < seed.length; at += 1) {
-    state = Math.imul(state ^ seed.charCodeAt(at), 0x01000193);
-  }
-  const next = (): number => {
-    state = (state + 0x6d2b79f5) | 0;
-    let mixed = Math.imul(state ^ (state >>> 15), 1 | state);
-    mixed = (mixed + Math.imul(mixed ^ (mixed >>> 7), 61 | mixed)) ^ mixed;
-    return ((mixed ^ (mixed >>> 14)) >>> 0) / 4294967296;
-  };
+  const next = randomFrom(seedOf(seed));
   return {
     next,
     between: (least, most) => least + next() * (most - least),

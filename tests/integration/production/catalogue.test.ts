@@ -1,34 +1,22 @@
 /** The commands of the workshop's catalogue. */
 import { afterEach, beforeEach, describe, expect, it } from "vitest";
 import { newId } from "@/lib/core/ids";
-import {
-  addMachine,
-  changeMachine,
-  retireMachine,
-  setDensity,
-} from "@/lib/production/commands/machines";
-import { addPiece, changePiece, retirePiece, weighPieces } from "@/lib/production/commands/pieces";
-import { addTool, changeTool, retireTool } from "@/lib/production/commands/tools";
+import { addMachine, changeMachine, setDensity } from "@/lib/production/commands/machines";
+import { addPiece, changePiece, weighPieces } from "@/lib/production/commands/pieces";
+import { addTool, changeTool } from "@/lib/production/commands/tools";
 import type { PieceData } from "@/lib/production/contract/catalogue";
 import { getCatalogue } from "@/lib/production/queries/catalogue";
-import { coaster, mould, press } from "../../support/catalogue";
+import {
+  addedMachine,
+  addedPiece,
+  addedTool,
+  asLead,
+  coaster,
+  mould,
+  press,
+} from "../../support/catalogue";
 import { auditRows, commandCases, refusalOf } from "../../support/command-cases";
 import { newScheme, NOON, type TestScheme } from "../../support/scheme";
-
-const asLead = (scheme: TestScheme, input: object) => scheme.ctx("lead", NOON, input);
-function addedPiece(scheme: TestScheme, data: Partial<PieceData> = {}) {
-  const input = { requestId: newId(), ...coaster, ...data };
-  return addPiece(asLead(scheme, input), input);
-}
-function addedTool(scheme: TestScheme, name = "Coaster mould") {
-  const { id } = addedPiece(scheme);
-  const input = { requestId: newId(), ...mould(id), name };
-  return addTool(asLead(scheme, input), input);
-}
-function addedMachine(scheme: TestScheme, name = "Sheet press") {
-  const input = { requestId: newId(), ...press, name };
-  return addMachine(asLead(scheme, input), input);
-}
 
 describe("addPiece", () => {
   commandCases({
@@ -91,21 +79,6 @@ describe("weighPieces", () => {
   });
 });
 
-describe("retirePiece", () => {
-  commandCases({
-    command: retirePiece,
-    by: "lead",
-    notBy: "volunteer",
-    input: (scheme) => ({ requestId: newId(), pieceId: addedPiece(scheme).id }),
-    does: (_, answer) => expect(answer.retiredAt).toBe(NOON),
-    wrongState: () => ({
-      input: { requestId: newId(), pieceId: newId<"piece">() },
-      code: "not-found",
-    }),
-    action: "pieces.retire",
-  });
-});
-
 describe("addTool", () => {
   commandCases({
     command: addTool,
@@ -147,21 +120,6 @@ describe("changeTool", () => {
   });
 });
 
-describe("retireTool", () => {
-  commandCases({
-    command: retireTool,
-    by: "lead",
-    notBy: "volunteer",
-    input: (scheme) => ({ requestId: newId(), toolId: addedTool(scheme).id }),
-    does: (_, answer) => expect(answer.retiredAt).toBe(NOON),
-    wrongState: () => ({
-      input: { requestId: newId(), toolId: newId<"tool">() },
-      code: "not-found",
-    }),
-    action: "tools.retire",
-  });
-});
-
 describe("addMachine", () => {
   commandCases({
     command: addMachine,
@@ -197,21 +155,6 @@ describe("changeMachine", () => {
       code: "not-found",
     }),
     action: "machines.change",
-  });
-});
-
-describe("retireMachine", () => {
-  commandCases({
-    command: retireMachine,
-    by: "lead",
-    notBy: "volunteer",
-    input: (scheme) => ({ requestId: newId(), machineId: addedMachine(scheme).id }),
-    does: (_, answer) => expect(answer.retiredAt).toBe(NOON),
-    wrongState: () => ({
-      input: { requestId: newId(), machineId: newId<"machine">() },
-      code: "not-found",
-    }),
-    action: "machines.retire",
   });
 });
 

@@ -1,5 +1,6 @@
 import { describe, expect, test } from "vitest";
-import { chipPath, hatchPath, randomFrom, seedOf } from "@/components/ui/flake-shapes";
+import { chipPath, hatchPath } from "@/components/ui/flake-shapes";
+import { randomFrom, seedOf } from "@/lib/core/random";
 
 /** Corners of a chip, from its path data: one absolute start, then steps relative to the last corner. */
 function corners(path: string): { x: number; y: number }[] {

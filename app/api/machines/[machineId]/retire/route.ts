@@ -1,5 +1,5 @@
 import { route } from "@/lib/http/route";
-import { retireMachine } from "@/lib/production/commands/machines";
-import { retireMachineEndpoint } from "@/lib/production/contract/catalogue";
+import { retireMachine } from "@/lib/production/commands/retire";
+import { retireMachineEndpoint } from "@/lib/production/contract/retiring";
 
 export const POST = route(retireMachineEndpoint, retireMachine);

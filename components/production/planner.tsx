@@ -8,7 +8,8 @@ import { fetchEndpoint } from "@/components/forms/fetch-endpoint";
 import { QueryProvider } from "@/components/forms/query-provider";
 import { useCommand } from "@/components/forms/use-command";
 import { Button } from "@/components/ui/button";
-import { Notice } from "@/components/ui/notice";
+import { ButtonLink } from "@/components/ui/button-link";
+import { EmptyState } from "@/components/ui/empty-state";
 import { formatKg } from "@/lib/core/mass";
 import type { Id } from "@/lib/core/ids";
 import type { Catalogue } from "@/lib/production/contract/catalogue";
@@ -98,10 +99,13 @@ function Table({ catalogue, run, seed }: Props) {
 
   if (!piece || !density || !parts) {
     return (
-      <Notice tone="info" title="Nothing to make yet">
-        The catalogue has no piece. A lead adds pieces, tools and machines there; then runs can be
-        planned.
-      </Notice>
+      <EmptyState
+        title="Nothing to make yet"
+        action={<ButtonLink href="/catalogue">Go to the catalogue</ButtonLink>}
+      >
+        The catalogue has no piece. Add what the workshop makes, its tools and its machines there;
+        then runs can be planned.
+      </EmptyState>
     );
   }
   return (
@@ -126,11 +130,13 @@ function Table({ catalogue, run, seed }: Props) {
         {need && stock.data && whole ? (
           <BlendStanding parts={parts} need={need} shares={shares} stock={stock.data} />
         ) : null}
-        {!whole && shares.length > 0 ? (
+        {whole ? null : (
           <p role="status" className="mt-3 font-bold text-warn">
-            The shares add up to {sumOfShares(shares) / 10} %; they must make 100 %.
+            {shares.length === 0
+              ? "Choose the colours of the blend; then it says whether there is enough."
+              : `The shares add up to ${sumOfShares(shares) / 10} %; they must make 100 %.`}
           </p>
-        ) : null}
+        )}
         <div className="mt-5 grid gap-3">
           <CommandNotice
             command={command}

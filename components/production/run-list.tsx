@@ -41,7 +41,7 @@ export function RunList({ runs, mayPlan }: Props) {
               <div className="min-w-0">
                 <Link
                   href={`/runs/${run.number}`}
-                  className="link -my-2 inline-flex min-h-11 items-center font-heading text-lg font-bold wrap-anywhere"
+                  className="link block py-1.5 font-heading text-lg/6 font-bold wrap-anywhere"
                 >
                   {runTitle(run)}
                 </Link>
@@ -50,7 +50,7 @@ export function RunList({ runs, mayPlan }: Props) {
                   {run.colours.map(({ name }) => name.toLowerCase()).join(" and ")}
                 </p>
               </div>
-              <div className="text-right">
+              <div className="wide:text-right">
                 <p className="font-mono text-lg font-bold tracking-tighter">
                   {formatKg(run.needGrams)} kg
                 </p>

@@ -1,6 +1,7 @@
 /** Entries leave the catalogue and come back. */
-import { describe, expect } from "vitest";
+import { describe, expect, it } from "vitest";
 import { newId } from "@/lib/core/ids";
+import { planRun } from "@/lib/production/commands/plan-run";
 import {
   restoreMachine,
   restorePiece,
@@ -10,8 +11,9 @@ import {
   retireTool,
 } from "@/lib/production/commands/retire";
 import { addedMachine, addedPiece, addedTool, asLead } from "../../support/catalogue";
-import { commandCases } from "../../support/command-cases";
+import { commandCases, refusalOf } from "../../support/command-cases";
 import { NOON } from "../../support/scheme";
+import { newWorkshop } from "../../support/workshop";
 
 describe("retirePiece", () => {
   commandCases({
@@ -115,5 +117,19 @@ describe("restoreMachine", () => {
       code: "not-found",
     }),
     action: "machines.restore",
+  });
+});
+
+describe("a plan", () => {
+  it("is not made with what has left the catalogue until that is brought back", () => {
+    const shop = newWorkshop();
+    const retire = { requestId: newId(), pieceId: shop.hookId };
+    retirePiece(asLead(shop, retire), retire);
+    const input = shop.planOf({});
+    expect(refusalOf(() => planRun(asLead(shop, input), input))).toBe("not-in-catalogue");
+    const back = { requestId: newId(), pieceId: shop.hookId };
+    restorePiece(asLead(shop, back), back);
+    expect(planRun(asLead(shop, input), input).number).toBe(1);
+    shop.close();
   });
 });
